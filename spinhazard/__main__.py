@@ -1,0 +1,5 @@
+"""``python -m spinhazard``."""
+
+from spinhazard.cli import main
+
+main()

@@ -1,0 +1,1 @@
+"""Text to number and back: stated values, our notation, allow-listed units, display."""

@@ -1,0 +1,1 @@
+"""What the assessor states: frozen models of the assessment file and the policy, read without computing anything."""
