@@ -28,7 +28,17 @@
 
 from typing import TYPE_CHECKING, Any
 
-__all__ = ["Assessment", "InputError", "OutputError", "Policy", "as_json", "assess", "assessment_from_text", "read_assessment", "read_policy"]
+__all__ = [
+    "Assessment",
+    "InputError",
+    "OutputError",
+    "Policy",
+    "as_json",
+    "assess",
+    "assessment_from_text",
+    "read_assessment",
+    "read_policy",
+]
 
 if TYPE_CHECKING:
     from spinhazard.assessment import Assessment, as_json, assess

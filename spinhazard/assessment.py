@@ -115,7 +115,12 @@ def program_name() -> str:
 
 
 def assess(
-    reading: Reading, *, policy: Policy | None = None, best_estimate: bool = False, system: System = "si", catalogue: Catalogue | None = None
+    reading: Reading,
+    *,
+    policy: Policy | None = None,
+    best_estimate: bool = False,
+    system: System = "si",
+    catalogue: Catalogue | None = None,
 ) -> Assessment:
     """Assess one machine.
 
@@ -151,7 +156,14 @@ def assess(
         found = tuple(findings(catalogue.rules, sheet, system=system))
         facts = tuple(_all_facts(sheet))
     return Assessment(
-        reading=reading, policy=policy, sheet=sheet, facts=facts, findings=found, digests=digests, draws=draws, program=program_name()
+        reading=reading,
+        policy=policy,
+        sheet=sheet,
+        facts=facts,
+        findings=found,
+        digests=digests,
+        draws=draws,
+        program=program_name(),
     )
 
 
@@ -185,7 +197,9 @@ def equation_of(key: str) -> str:
     declaration = FACTS[key]
     if any(declaration.equation == formula.equation for formula in declaration.formulas):
         return printed(declaration.equation)
-    return "; ".join(printed(part) if "**" in part or "*" in part else part for part in declaration.equation.split("; "))
+    return "; ".join(
+        printed(part) if "**" in part or "*" in part else part for part in declaration.equation.split("; ")
+    )
 
 
 def as_json(assessment: Assessment) -> str:

@@ -32,7 +32,9 @@ def quoted(value: object) -> str:
         Text in double quotes for strings, plain for numbers and the like.
     """
     if isinstance(value, str):
-        text = "".join(c if c.isprintable() else c.encode("unicode_escape").decode() for c in value[: LONGEST_QUOTE * 2])
+        text = "".join(
+            c if c.isprintable() else c.encode("unicode_escape").decode() for c in value[: LONGEST_QUOTE * 2]
+        )
         if len(value) > LONGEST_QUOTE:
             text = f"{text[:LONGEST_QUOTE]}… ({len(value)} characters)"
         return f'"{text}"'

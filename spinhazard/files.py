@@ -41,10 +41,14 @@ def read_text(path: Path, *, limit: int = ASSESSMENT_FILE_LIMIT, what: str = "an
         text = data.decode("utf-8-sig")
     except UnicodeDecodeError as error:
         raise InputError(
-            Complaint(f"not readable as text (byte {error.start} is not UTF-8)", file=str(path), accepted=f"{what} in UTF-8")
+            Complaint(
+                f"not readable as text (byte {error.start} is not UTF-8)", file=str(path), accepted=f"{what} in UTF-8"
+            )
         ) from None
     if "\x00" in text:
-        raise InputError(Complaint("not a text file (it holds NUL characters)", file=str(path), accepted=f"{what} in UTF-8"))
+        raise InputError(
+            Complaint("not a text file (it holds NUL characters)", file=str(path), accepted=f"{what} in UTF-8")
+        )
     return text
 
 
@@ -64,7 +68,9 @@ def _read_bytes(path: Path, *, limit: int, what: str) -> bytes:
         raise InputError(Complaint(f"cannot be read ({reason})", file=str(path), accepted=what)) from None
     if len(data) > limit:
         raise InputError(
-            Complaint(f"larger than {limit:,} bytes".replace(",", " "), file=str(path), accepted=f"{what} below that size")
+            Complaint(
+                f"larger than {limit:,} bytes".replace(",", " "), file=str(path), accepted=f"{what} below that size"
+            )
         )
     return data
 
@@ -98,13 +104,21 @@ def check_output(path: Path, *, overwrite: bool) -> None:
         raise OutputError(Complaint("this is a folder", file=str(path), accepted="the name of a file to write"))
     if path.exists() and not overwrite:
         raise OutputError(
-            Complaint("exists already and was left as it is", file=str(path), accepted="a new name, or --overwrite to replace it")
+            Complaint(
+                "exists already and was left as it is",
+                file=str(path),
+                accepted="a new name, or --overwrite to replace it",
+            )
         )
     folder = path.parent
     if not folder.is_dir():
-        raise OutputError(Complaint("its folder does not exist", file=str(path), accepted="a path in an existing folder"))
+        raise OutputError(
+            Complaint("its folder does not exist", file=str(path), accepted="a path in an existing folder")
+        )
     if not os.access(folder, os.W_OK):
-        raise OutputError(Complaint("its folder cannot be written to", file=str(path), accepted="a path in a writable folder"))
+        raise OutputError(
+            Complaint("its folder cannot be written to", file=str(path), accepted="a path in a writable folder")
+        )
 
 
 def write_file(path: Path, data: bytes, *, overwrite: bool) -> None:

@@ -8,6 +8,7 @@ from __future__ import annotations
 
 import hashlib
 import math
+from collections.abc import Sequence
 
 import numpy as np
 from numpy.typing import NDArray
@@ -92,6 +93,40 @@ def _positive_normal(generator: np.random.Generator, mean: float, deviation: flo
             return drawn
         drawn[below] = generator.normal(mean, deviation, int(below.sum()))
     return np.where(drawn > 0.0, drawn, mean)
+
+
+def largest(terms: Sequence[Samples]) -> Samples:
+    """Entry by entry the largest of samples of different lengths.
+
+    Parameters
+    ----------
+    terms : sequence of ndarray
+        Samples, at least one.
+
+    Returns
+    -------
+    ndarray
+        Their maximum; NaN where any is.
+    """
+    result: Samples = np.maximum.reduce(np.broadcast_arrays(*terms))
+    return result
+
+
+def smallest(terms: Sequence[Samples]) -> Samples:
+    """Entry by entry the smallest of samples of different lengths.
+
+    Parameters
+    ----------
+    terms : sequence of ndarray
+        Samples, at least one.
+
+    Returns
+    -------
+    ndarray
+        Their minimum; NaN where any is.
+    """
+    result: Samples = np.minimum.reduce(np.broadcast_arrays(*terms))
+    return result
 
 
 def interval(samples: Samples, coverage: float) -> tuple[float, float]:

@@ -20,11 +20,16 @@ app = typer.Typer(
 Overwrite = Annotated[bool, typer.Option("--overwrite", help="Replace output files that exist.")]
 Units = Annotated[str, typer.Option(metavar="si|us", help="Units shown: si, or us (US customary).")]
 PolicyFile = Annotated[Optional[Path], typer.Option(metavar="FILE", help="The site's policy file.")]  # noqa: UP045  (typer reads it at run time)
-JsonPath = Annotated[Optional[Path], typer.Option("--json", metavar="PATH", help="Write the result as JSON; - for standard output.")]  # noqa: UP045
+JsonPath = Annotated[
+    Path | None, typer.Option("--json", metavar="PATH", help="Write the result as JSON; - for standard output.")
+]
 
 
 @app.callback(invoke_without_command=True)
-def _root(version: Annotated[bool, typer.Option("--version", help="Show name and version.", is_eager=True)] = False) -> None:  # noqa: FBT002
+def _root(
+    *,
+    version: Annotated[bool, typer.Option("--version", help="Show name and version.", is_eager=True)] = False,
+) -> None:
     if version:
         from spinhazard.assessment import program_name  # noqa: PLC0415
 
@@ -42,7 +47,9 @@ def _system(units: str) -> Literal["si", "us"]:
 
 @app.command()
 def start(
-    kind: Annotated[str, typer.Argument(help="fan, grinder, saw, press, centrifuge, lathe, mixer, roll, flywheel or other.")],
+    kind: Annotated[
+        str, typer.Argument(help="fan, grinder, saw, press, centrifuge, lathe, mixer, roll, flywheel or other.")
+    ],
     file: Annotated[Path, typer.Argument(help="File to write.")],
     *,
     overwrite: Overwrite = False,
@@ -56,7 +63,9 @@ def start(
 @app.command()
 def assess(
     files: Annotated[list[Path], typer.Argument(metavar="FILE…", help="Assessment files.")],
-    pdf: Annotated[Optional[Path], typer.Option(metavar="PATH", help="Write the worksheet; a folder for several files.")] = None,  # noqa: UP045
+    pdf: Annotated[
+        Path | None, typer.Option(metavar="PATH", help="Write the worksheet; a folder for several files.")
+    ] = None,
     json: JsonPath = None,
     policy: PolicyFile = None,
     units: Units = "si",

@@ -49,6 +49,8 @@ def run(files: list[Path], outputs: Outputs, *, policy_file: Path | None, system
 
     Raises
     ------
+    InputError
+        A file was not usable; with several files the others were assessed all the same.
     SystemExit
         With the exit code of the contract.
     """
@@ -76,17 +78,27 @@ def run(files: list[Path], outputs: Outputs, *, policy_file: Path | None, system
 def _targets(files: list[Path], outputs: Outputs) -> list[tuple[Path | None, Path | None]]:
     """Paths of worksheet and JSON for each file, refused before anything is computed."""
     if outputs.paper not in {"a4", "letter"}:
-        raise InputError(Complaint("not a size of paper known here", field="--paper", stated=quoted(outputs.paper), accepted="a4, letter"))
+        raise InputError(
+            Complaint(
+                "not a size of paper known here", field="--paper", stated=quoted(outputs.paper), accepted="a4, letter"
+            )
+        )
     pdfs = _paths(files, outputs.pdf, ".pdf", "--pdf")
     jsons = [None] * len(files) if outputs.json_to_screen else _paths(files, outputs.json, ".json", "--json")
     if outputs.json_to_screen and len(files) > 1:
-        raise OutputError(Complaint("one JSON text holds one machine", field="--json", stated="-", accepted="a folder for several files"))
+        raise OutputError(
+            Complaint(
+                "one JSON text holds one machine", field="--json", stated="-", accepted="a folder for several files"
+            )
+        )
     planned = [path for path in (*pdfs, *jsons) if path is not None]
     for path in planned:
         if planned.count(path) > 1:
             raise OutputError(Complaint("two outputs would have this name", file=str(path)))
         if any(path.exists() and path.samefile(file) for file in files if file.exists()):
-            raise OutputError(Complaint("this is an input file", file=str(path), accepted="another name for the output"))
+            raise OutputError(
+                Complaint("this is an input file", file=str(path), accepted="another name for the output")
+            )
         check_output(path, overwrite=outputs.overwrite)
     return list(zip(pdfs, jsons, strict=True))
 
@@ -97,7 +109,14 @@ def _paths(files: list[Path], target: Path | None, ending: str, option: str) -> 
     if target.is_dir():
         return [target / f"{file.stem}{ending}" for file in files]
     if len(files) > 1:
-        raise OutputError(Complaint("not a folder", file=str(target), field=option, accepted="an existing folder for several assessment files"))
+        raise OutputError(
+            Complaint(
+                "not a folder",
+                file=str(target),
+                field=option,
+                accepted="an existing folder for several assessment files",
+            )
+        )
     return [target]
 
 

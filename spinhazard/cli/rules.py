@@ -41,7 +41,13 @@ def run(key: str | None, *, family: str | None, json_path: Path | None, overwrit
     if family is not None and family not in families:
         near = difflib.get_close_matches(family[:80], families, n=1, cutoff=0.4)
         raise InputError(
-            Complaint("no such family of rules", field="--family", stated=quoted(family), accepted=", ".join(families), nearest=near[0] if near else "")
+            Complaint(
+                "no such family of rules",
+                field="--family",
+                stated=quoted(family),
+                accepted=", ".join(families),
+                nearest=near[0] if near else "",
+            )
         )
     if key is not None:
         rules: tuple[Rule, ...] = (catalogue.rule(key),)
@@ -92,11 +98,25 @@ def explained(rule: Rule) -> list[str]:
     lines += ["For review when"]
     lines += [line for condition in rule.review for line in wrapped(in_words(condition), indent=4, first="  · ")]
     lines += ["", "It says", *wrapped(rule.says, indent=2)]
-    needs = dict.fromkeys(name for line in rule.comparisons() for name in (line.fact, line.operand.name) if name in FACTS)
-    lines += ["", "It needs", *(text for name in needs for text in wrapped(f"{name}: {FACTS[name].label}", indent=4, first="  · "))]
-    lines += ["", "Rests on", *(text for basis in rule.basis for text in wrapped(citation(basis), indent=4, first="  · "))]
+    needs = dict.fromkeys(
+        name for line in rule.comparisons() for name in (line.fact, line.operand.name) if name in FACTS
+    )
+    lines += [
+        "",
+        "It needs",
+        *(text for name in needs for text in wrapped(f"{name}: {FACTS[name].label}", indent=4, first="  · ")),
+    ]
+    lines += [
+        "",
+        "Rests on",
+        *(text for basis in rule.basis for text in wrapped(citation(basis), indent=4, first="  · ")),
+    ]
     if rule.measures:
-        lines += ["", "What may be changed", *(text for lever in rule.measures for text in wrapped(lever, indent=4, first="  · "))]
+        lines += [
+            "",
+            "What may be changed",
+            *(text for lever in rule.measures for text in wrapped(lever, indent=4, first="  · ")),
+        ]
     if rule.withdrawn:
         lines += ["", f"Withdrawn with version {rule.withdrawn}; kept so that older worksheets can be explained."]
     return [*lines, "", *wrapped(CAUTIONS[2])]

@@ -76,7 +76,12 @@ def wrapped(text: str, *, indent: int = 0, first: str = "") -> list[str]:
     """
     margin = " " * indent
     lines = textwrap.wrap(
-        text, width=width() - 1, initial_indent=first or margin, subsequent_indent=margin, break_long_words=True, break_on_hyphens=False
+        text,
+        width=width() - 1,
+        initial_indent=first or margin,
+        subsequent_indent=margin,
+        break_long_words=True,
+        break_on_hyphens=False,
     )
     return lines or [first.rstrip()]
 

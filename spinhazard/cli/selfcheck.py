@@ -32,20 +32,37 @@ def run(*, all_values: bool) -> None:
     else:
         for result in deviating:
             say(*_lines(result))
-    kinds = ", ".join(
-        f"{sum(r.check.kind == kind for r in results)} {kind}" for kind in ("published", "recomputed", "regression") if any(r.check.kind == kind for r in results)
-    )
+    counts = {
+        kind: sum(result.check.kind == kind for result in results) for kind in ("published", "recomputed", "regression")
+    }
+    kinds = ", ".join(f"{count} {kind}" for kind, count in counts.items() if count)
     memory = sum(result.check.read == "memory" for result in results)
-    say("", *wrapped(f"{program_name()}: {len(results)} check values ({kinds}; {memory} of the figures from memory, marked so)."))
+    say(
+        "",
+        *wrapped(
+            f"{program_name()}: {len(results)} check values ({kinds}; {memory} of the figures from memory, marked so)."
+        ),
+    )
     if deviating:
-        say(*wrapped(f"{len(deviating)} deviate by more than their tolerance. Do not use this installation before the cause is known."))
+        say(
+            *wrapped(
+                f"{len(deviating)} deviate by more than their tolerance. Do not use this installation before the cause is known."
+            )
+        )
         raise SystemExit(1)
-    say(*wrapped("Every value lies within its stated tolerance. This is evidence for the validation of software; it is no statement about a machine."))
+    say(
+        *wrapped(
+            "Every value lies within its stated tolerance. This is evidence for the validation of software; it is no statement about a machine."
+        )
+    )
 
 
 def _lines(result: CheckResult) -> list[str]:
     check = result.check
     mark = "  " if result.within else "! "
-    head = f"{check.name}: published {check.expect:.6g}, here {result.computed:.6g}, deviation {result.deviation:.2g} (tolerance {check.tolerance:.2g})"
+    head = (
+        f"{check.name}: published {check.expect:.6g}, here {result.computed:.6g}, "
+        f"deviation {result.deviation:.2g} (tolerance {check.tolerance:.2g})"
+    )
     origin = f"{citation(check.source)}; {check.kind}" + ("; figure from memory" if check.read == "memory" else "")
     return [*wrapped(head, indent=4, first=mark), *wrapped(origin, indent=6)]

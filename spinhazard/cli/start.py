@@ -35,7 +35,13 @@ def run(kind: str, file: Path, *, overwrite: bool) -> None:
     if kind not in KINDS:
         near = difflib.get_close_matches(kind[:80].lower(), KINDS, n=1, cutoff=0.4)
         raise InputError(
-            Complaint("not a kind of machine known here", field="KIND", stated=quoted(kind), accepted=", ".join(KINDS), nearest=near[0] if near else "")
+            Complaint(
+                "not a kind of machine known here",
+                field="KIND",
+                stated=quoted(kind),
+                accepted=", ".join(KINDS),
+                nearest=near[0] if near else "",
+            )
         )
     text = resources.files("spinhazard.statement").joinpath("starters", f"{kind}.toml").read_text("utf-8")
     write_file(file, text.encode("utf-8"), overwrite=overwrite)

@@ -107,13 +107,23 @@ def _stops(assessment: Assessment, system: System) -> list[str]:
     if not table:
         return []
     sizes = [max(len(row[i]) for row in (heads, *table)) + 2 for i in range(len(heads))]
-    return ["", *("".join([padded(row[0], sizes[0]), *(cell.rjust(size) for cell, size in zip(row[1:], sizes[1:], strict=True))]).rstrip() for row in (heads, *table))]
+    return [
+        "",
+        *(
+            "".join(
+                [padded(row[0], sizes[0]), *(cell.rjust(size) for cell, size in zip(row[1:], sizes[1:], strict=True))]
+            ).rstrip()
+            for row in (heads, *table)
+        ),
+    ]
 
 
 def _findings(assessment: Assessment) -> list[str]:
     lines: list[str] = []
     for urgency in URGENCIES:
-        found = [f for f in assessment.findings if f.outcome in {"for review", "borderline"} and f.rule.urgency == urgency]
+        found = [
+            f for f in assessment.findings if f.outcome in {"for review", "borderline"} and f.rule.urgency == urgency
+        ]
         if found:
             lines += ["", f"{urgency.upper()}"]
             for finding in sorted(found, key=lambda f: f.outcome != "for review"):
@@ -125,7 +135,10 @@ def _finding(finding: Finding) -> list[str]:
     mark = "!" if finding.outcome == "for review" else "~"
     about = "" if finding.subject in {"machine", "lockout"} else f" · {finding.subject}"
     note = "" if finding.outcome == "for review" else " (borderline)"
-    return [*wrapped(f"{finding.rule.key}{about}{note}", indent=4, first=f"  {mark} "), *wrapped(finding.says, indent=4)]
+    return [
+        *wrapped(f"{finding.rule.key}{about}{note}", indent=4, first=f"  {mark} "),
+        *wrapped(finding.says, indent=4),
+    ]
 
 
 def _missing(assessment: Assessment) -> list[str]:

@@ -10,7 +10,7 @@ from spinhazard.facts.fact import Word, fact
 from spinhazard.facts.sheet import FactSheet
 from spinhazard.facts.subject import Subject
 from spinhazard.mechanics import reach
-from spinhazard.sampling import Samples
+from spinhazard.sampling import Samples, largest, smallest
 from spinhazard.statement.guarding import Opening
 
 ZERO: Samples = np.zeros(1)
@@ -65,7 +65,10 @@ def guard_distance(sheet: FactSheet, guard: Subject) -> Samples:
 def access_time(sheet: FactSheet, guard: Subject) -> Samples:
     """Least time in which a person can reach the hazard zone through this guard."""
     time = sheet.apply(
-        reach.reach_time, sheet.value(guard, "distance"), sheet.policy("approach_speed"), intrusion=_optional(sheet, guard, "intrusion")
+        reach.reach_time,
+        sheet.value(guard, "distance"),
+        sheet.policy("approach_speed"),
+        intrusion=_optional(sheet, guard, "intrusion"),
     )
     if guard.entity.fastening == "tool" and guard.entity.opening_time is not None:
         time = np.maximum(time, sheet.value(guard, "opening_time"))
@@ -81,14 +84,20 @@ def stop_time_before_access(sheet: FactSheet, guard: Subject) -> Samples:
     return np.maximum(sheet("access_time", guard) - (ZERO if response is None else response), 0.0)
 
 
-@fact(per="machine", unit="s", symbol="t_acc", equation="t_acc = min over the guards without standstill sensor", source="iso-13855")
+@fact(
+    per="machine",
+    unit="s",
+    symbol="t_acc",
+    equation="t_acc = min over the guards without standstill sensor",
+    source="iso-13855",
+)
 def earliest_access(sheet: FactSheet, _machine: Subject) -> Samples | None:
     """Least time the rotor has been stopping when it can be reached through any guard."""
     times = [
         sheet("stop_time_before_access", guard) for guard in sheet.subjects.guards
         if guard.entity.lock_release != "standstill sensor"
     ]  # fmt: skip
-    return np.minimum.reduce(np.broadcast_arrays(*times)) if times else None
+    return smallest(times) if times else None
 
 
 @fact(
@@ -154,7 +163,7 @@ def opening_size(sheet: FactSheet, guard: Subject) -> Samples | None:
 def largest_opening(sheet: FactSheet, guard: Subject) -> Samples | None:
     """Size of the largest opening in the guard."""
     sizes = [size for _, size, _ in _limits(sheet, guard)]
-    return np.maximum.reduce(np.broadcast_arrays(*sizes)) if sizes else None
+    return largest(sizes) if sizes else None
 
 
 @fact(per="guard", unit="m", symbol="h")
@@ -187,7 +196,14 @@ def exposed_angle(sheet: FactSheet, guard: Subject) -> Samples | None:
     return sheet.value(guard, "exposed_angle") if guard.entity.wheel_use is not None else None
 
 
-EXPOSED_ANGLES = {"bench": 90.0, "floor stand": 90.0, "cylindrical": 180.0, "surface": 150.0, "cut-off": 150.0, "top": 60.0}
+EXPOSED_ANGLES = {
+    "bench": 90.0,
+    "floor stand": 90.0,
+    "cylindrical": 180.0,
+    "surface": 150.0,
+    "cut-off": 150.0,
+    "top": 60.0,
+}
 """Largest exposed angle in degrees by use of the wheel, 29 CFR 1910.215(b)(3)–(8), from memory."""
 
 
@@ -204,6 +220,6 @@ def exposed_angle_limit(sheet: FactSheet, guard: Subject) -> Samples | None:
 @fact(per="shaft", word=True)
 def is_guarded(sheet: FactSheet, shaft: Subject) -> Word | None:
     """Whether a guard other than none covers the shaft."""
-    return any(shaft.entity.id in guard.entity.covers and guard.entity.kind != "none" for guard in sheet.subjects.guards)
-
-
+    return any(
+        shaft.entity.id in guard.entity.covers and guard.entity.kind != "none" for guard in sheet.subjects.guards
+    )

@@ -5,12 +5,12 @@ from __future__ import annotations
 import numpy as np
 
 from spinhazard.facts.drag import NONE
-from spinhazard.facts.fact import Word, fact
+from spinhazard.facts.fact import fact
 from spinhazard.facts.sheet import FactSheet
 from spinhazard.facts.stopping import brakes_of, stop_stages, total_of
 from spinhazard.facts.subject import Subject
 from spinhazard.mechanics import braking
-from spinhazard.sampling import Samples
+from spinhazard.sampling import Samples, largest, smallest
 
 
 def _heats(sheet: FactSheet, case: str) -> dict[str, Samples]:
@@ -54,10 +54,14 @@ def brake_temperature_rise(sheet: FactSheet, stop: Subject) -> Samples | None:
         if brake.heat_capacity_mass is None:
             rises.append(sheet.missing(f"{path}.heat_capacity_mass"))
             continue
-        specific_heat = sheet.policy("specific_heat") if brake.specific_heat is None else sheet.draw(f"{path}.specific_heat", brake.specific_heat)
+        specific_heat = (
+            sheet.policy("specific_heat")
+            if brake.specific_heat is None
+            else sheet.draw(f"{path}.specific_heat", brake.specific_heat)
+        )
         capacity = sheet.draw(f"{path}.heat_capacity_mass", brake.heat_capacity_mass)
         rises.append(sheet.apply(braking.temperature_rise, heats[brake.id], capacity, specific_heat=specific_heat))
-    return np.maximum.reduce(np.broadcast_arrays(*rises))
+    return largest(rises)
 
 
 @fact(per="stop", unit="K", symbol="ΔT_lim", source="policy")
@@ -70,7 +74,7 @@ def temperature_rise_limit(sheet: FactSheet, stop: Subject) -> Samples | None:
         else sheet.draw(f"stopping.brake.{brake.id}.max_temperature_rise", brake.max_temperature_rise)
         for brake in brakes_of(sheet, stop.entity)
     ]  # fmt: skip
-    return np.minimum.reduce(np.broadcast_arrays(*limits))
+    return smallest(limits)
 
 
 @fact(per="stop", symbol="Q/Q_rated", equation="max(Q / Q_rated)", source="practice")
@@ -84,4 +88,4 @@ def brake_rating_use(sheet: FactSheet, stop: Subject) -> Samples | None:
         path = f"stopping.brake.{brake.id}.energy_rating"
         rating = sheet.missing(path) if brake.energy_rating is None else sheet.draw(path, brake.energy_rating)
         shares.append(heats[brake.id] / rating)
-    return np.maximum.reduce(np.broadcast_arrays(*shares))
+    return largest(shares)

@@ -11,14 +11,14 @@ from spinhazard.facts.shapes import optional
 from spinhazard.facts.sheet import FactSheet
 from spinhazard.facts.subject import Subject
 from spinhazard.mechanics import fragments
-from spinhazard.sampling import Samples
+from spinhazard.sampling import Samples, smallest
 from spinhazard.statement.materials import materials
 
 ROUND = ("disk", "ring")
 
 
 def _is_sector(part: Subject) -> bool:
-    return part.entity.fragment.kind == "sector"
+    return bool(part.entity.fragment.kind == "sector")
 
 
 def _radii(sheet: FactSheet, part: Subject) -> tuple[Samples, Samples]:
@@ -146,7 +146,7 @@ def fragment_face(sheet: FactSheet, guard: Subject) -> Samples | None:
              "torus": ("section_diameter",), "cone": ("length",)}.get(entity.shape, ())  # fmt: skip
     if not sides or any(getattr(entity, side) is None for side in sides):
         return sheet.missing(f"{path}.fragment.face")
-    return np.minimum.reduce(np.broadcast_arrays(*(sheet.value(threat.part, side) for side in sides)))
+    return smallest([sheet.value(threat.part, side) for side in sides])
 
 
 @fact(per="guard", word=True)

@@ -101,7 +101,10 @@ def _losses(sheet: FactSheet, law: str) -> list[tuple[Samples, Samples]]:
     """Power and speed of the stated losses that follow a law."""
     stopping = sheet.file.stopping
     return [
-        (sheet.draw(f"stopping.loss_power.{i}.power", loss.power), sheet.draw(f"stopping.loss_power.{i}.speed", loss.speed))
+        (
+            sheet.draw(f"stopping.loss_power.{i}.power", loss.power),
+            sheet.draw(f"stopping.loss_power.{i}.speed", loss.speed),
+        )
         for i, loss in enumerate(stopping.loss_power if stopping is not None else (), start=1)
         if loss.law == law
     ]
@@ -134,7 +137,9 @@ def _coast_is_measured(sheet: FactSheet) -> bool:
         return False
     if stopping.measured_case == "coast" or not stopping.brakes:
         return True
-    return stopping.measured_case == "power loss" and all(brake.works_without_power is False for brake in stopping.brakes)
+    return stopping.measured_case == "power loss" and all(
+        brake.works_without_power is False for brake in stopping.brakes
+    )
 
 
 @fact(
@@ -150,7 +155,10 @@ def constant_drag(sheet: FactSheet, _machine: Subject) -> Samples:
         return total
     if _coast_is_measured(sheet):
         return sheet.apply(
-            drag.friction_from_stop_time, sheet("referred_inertia"), sheet("stopping_shaft_speed"), time=sheet("measured_stopping_time")
+            drag.friction_from_stop_time,
+            sheet("referred_inertia"),
+            sheet("stopping_shaft_speed"),
+            time=sheet("measured_stopping_time"),
         )
     stopping = sheet.file.stopping
     if stopping is not None and stopping.measured_times and stopping.measured_case is None:
@@ -183,7 +191,12 @@ def drag_is_estimated(sheet: FactSheet, _machine: Subject) -> Word | None:
     if stopping is None:
         sheet.missing("stopping.shaft")
         return None
-    values = [stopping.friction_torque, stopping.viscous, stopping.windage, *(loss.power for loss in stopping.loss_power)]
+    values = [
+        stopping.friction_torque,
+        stopping.viscous,
+        stopping.windage,
+        *(loss.power for loss in stopping.loss_power),
+    ]
     stated = [value for value in values if value is not None]
     return bool(stated) and not stopping.measured_times and all(v.source_class in {None, "estimated"} for v in stated)
 

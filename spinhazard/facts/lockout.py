@@ -51,7 +51,9 @@ def back_drive(sheet: FactSheet, lockout: Subject) -> Word | None:
     return None if causes is None else ", ".join(causes) if isinstance(causes, tuple) and causes else "none"
 
 
-@fact(per="lockout", unit="s", symbol="age", equation="day of assessment − day of review", source="29cfr1910.147 (c)(6)")
+@fact(
+    per="lockout", unit="s", symbol="age", equation="day of assessment − day of review", source="29cfr1910.147 (c)(6)"
+)
 def procedure_age(sheet: FactSheet, lockout: Subject) -> Samples:
     """Time from the last review of the procedure to the assessment."""
     reviewed, assessed = lockout.entity.procedure_reviewed, sheet.file.assessment.date
@@ -66,7 +68,11 @@ def procedure_age(sheet: FactSheet, lockout: Subject) -> Samples:
 @fact(per="shaft", unit="N m", symbol="T_u", formulas=[unbalance.unbalance_torque])
 def unbalance_torque(sheet: FactSheet, shaft: Subject) -> Samples | None:
     """Largest torque by which static unbalance can turn the shaft."""
-    return None if shaft.entity.unbalance is None else sheet.apply(unbalance.unbalance_torque, sheet.value(shaft, "unbalance"))
+    return (
+        None
+        if shaft.entity.unbalance is None
+        else sheet.apply(unbalance.unbalance_torque, sheet.value(shaft, "unbalance"))
+    )
 
 
 @fact(per="shaft", unit="N m", symbol="a_i", equation="a_i = a / i", source="spinhazard-methods drag")

@@ -75,7 +75,13 @@ def computed_over_measured(sheet: FactSheet, _machine: Subject) -> Samples | Non
     return None if ratio is None else 1.0 / ratio
 
 
-@fact(per="machine", unit="s", symbol="age", equation="day of assessment − day of measurement", source="policy measurement_age_limit")
+@fact(
+    per="machine",
+    unit="s",
+    symbol="age",
+    equation="day of assessment − day of measurement",
+    source="policy measurement_age_limit",
+)
 def measurement_age(sheet: FactSheet, _machine: Subject) -> Samples | None:
     """Time from the measured stops to the assessment."""
     stopping = sheet.file.stopping

@@ -10,7 +10,7 @@ from spinhazard.facts.sheet import FactSheet
 from spinhazard.facts.subject import Subject
 from spinhazard.mechanics import energy, volume
 from spinhazard.mechanics import inertia as moments
-from spinhazard.sampling import Samples
+from spinhazard.sampling import Samples, largest
 from spinhazard.statement.materials import materials
 
 
@@ -96,7 +96,8 @@ def piece_mass(sheet: FactSheet, part: Subject) -> Samples:
 @fact(per="part", unit="kg", symbol="m", equation="m = N m₁", source="openstax-up1 §10.4")
 def mass(sheet: FactSheet, part: Subject) -> Samples:
     """Mass of the part, all pieces together."""
-    return part.entity.count * sheet("piece_mass", part)
+    pieces: Samples = part.entity.count * sheet("piece_mass", part)
+    return pieces
 
 
 @fact(
@@ -196,7 +197,9 @@ def shaft_drive(sheet: FactSheet, shaft: Subject) -> Word | None:
     return sheet.word(shaft, "drive")
 
 
-@fact(per="shaft", unit="rad/s", symbol="ω", equation="ω = i ω_driver, or as stated", source="spinhazard-methods inertia")
+@fact(
+    per="shaft", unit="rad/s", symbol="ω", equation="ω = i ω_driver, or as stated", source="spinhazard-methods inertia"
+)
 def shaft_speed(sheet: FactSheet, shaft: Subject) -> Samples:
     """Speed of the shaft in running: from the shaft it is coupled to and the ratio, or as stated."""
     if shaft.entity.driven_by is None:
@@ -207,7 +210,13 @@ def shaft_speed(sheet: FactSheet, shaft: Subject) -> Samples:
     return sheet.value(shaft, "ratio") * sheet("shaft_speed", driver)
 
 
-@fact(per="shaft", unit="rad/s", symbol="ω_max", equation="ω_max = i ω_max,driver, or as stated", source="spinhazard-methods inertia")
+@fact(
+    per="shaft",
+    unit="rad/s",
+    symbol="ω_max",
+    equation="ω_max = i ω_max,driver, or as stated",
+    source="spinhazard-methods inertia",
+)
 def shaft_max_speed(sheet: FactSheet, shaft: Subject) -> Samples:
     """Highest attainable speed of the shaft."""
     if shaft.entity.max_speed is not None or shaft.entity.driven_by is None:
@@ -275,7 +284,7 @@ def angular_momentum(sheet: FactSheet, _machine: Subject) -> Samples:
 @fact(per="machine", unit="m/s", symbol="v", equation="v = max(v_part)", source="openstax-up1 §10.3")
 def highest_tip_speed(sheet: FactSheet, _machine: Subject) -> Samples:
     """Speed of the machine's fastest point."""
-    return _largest([sheet("tip_speed", part) for part in sheet.subjects.parts])
+    return largest([sheet("tip_speed", part) for part in sheet.subjects.parts])
 
 
 @fact(per="machine", symbol="share", equation="Σ E_estimated / E", source="jcgm-100 4.3.1")
@@ -296,12 +305,3 @@ def _total(terms: list[Samples]) -> Samples:
     for term in terms[1:]:
         total = total + term
     return total
-
-
-def _largest(terms: list[Samples]) -> Samples:
-    largest = terms[0]
-    for term in terms[1:]:
-        largest = np.maximum(largest, term)
-    return largest
-
-

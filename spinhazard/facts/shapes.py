@@ -59,23 +59,34 @@ def profile_points(part: Subject) -> tuple[Samples, Samples]:
 
 def _disk_volume(sheet: FactSheet, part: Subject) -> Samples:
     return sheet.apply(
-        volume.disk_volume, sheet.value(part, "diameter"), sheet.value(part, "thickness"), bore=optional(sheet, part, "bore")
+        volume.disk_volume,
+        sheet.value(part, "diameter"),
+        sheet.value(part, "thickness"),
+        bore=optional(sheet, part, "bore"),
     )
 
 
 def _ring_volume(sheet: FactSheet, part: Subject) -> Samples:
     return sheet.apply(
-        volume.disk_volume, sheet.value(part, "outer_diameter"), sheet.value(part, "width"), bore=sheet.value(part, "inner_diameter")
+        volume.disk_volume,
+        sheet.value(part, "outer_diameter"),
+        sheet.value(part, "width"),
+        bore=sheet.value(part, "inner_diameter"),
     )
 
 
 def _sphere_volume(sheet: FactSheet, part: Subject) -> Samples:
-    return sheet.apply(volume.sphere_volume, sheet.value(part, "diameter"), inner_diameter=optional(sheet, part, "inner_diameter"))
+    return sheet.apply(
+        volume.sphere_volume, sheet.value(part, "diameter"), inner_diameter=optional(sheet, part, "inner_diameter")
+    )
 
 
 def _plate_volume(sheet: FactSheet, part: Subject) -> Samples:
     return sheet.apply(
-        volume.plate_volume, sheet.value(part, "radial"), sheet.value(part, "axial"), tangential=sheet.value(part, "tangential")
+        volume.plate_volume,
+        sheet.value(part, "radial"),
+        sheet.value(part, "axial"),
+        tangential=sheet.value(part, "tangential"),
     )
 
 
@@ -113,12 +124,17 @@ def _disk_inertia(sheet: FactSheet, part: Subject, mass: Samples) -> Samples:
 
 
 def _ring_inertia(sheet: FactSheet, part: Subject, mass: Samples) -> Samples:
-    return sheet.apply(inertia.disk_inertia, mass, sheet.value(part, "outer_diameter"), bore=sheet.value(part, "inner_diameter"))
+    return sheet.apply(
+        inertia.disk_inertia, mass, sheet.value(part, "outer_diameter"), bore=sheet.value(part, "inner_diameter")
+    )
 
 
 def _sphere_inertia(sheet: FactSheet, part: Subject, mass: Samples) -> Samples:
     return sheet.apply(
-        inertia.sphere_inertia, mass, sheet.value(part, "diameter"), inner_diameter=optional(sheet, part, "inner_diameter")
+        inertia.sphere_inertia,
+        mass,
+        sheet.value(part, "diameter"),
+        inner_diameter=optional(sheet, part, "inner_diameter"),
     )
 
 
@@ -129,7 +145,9 @@ def _rod_inertia(sheet: FactSheet, part: Subject, mass: Samples) -> Samples:
 
 
 def _plate_inertia(sheet: FactSheet, part: Subject, mass: Samples) -> Samples:
-    return sheet.apply(inertia.plate_inertia, mass, sheet.value(part, "radial"), tangential=sheet.value(part, "tangential"))
+    return sheet.apply(
+        inertia.plate_inertia, mass, sheet.value(part, "radial"), tangential=sheet.value(part, "tangential")
+    )
 
 
 def _cone_inertia(sheet: FactSheet, part: Subject, mass: Samples) -> Samples:
@@ -141,7 +159,10 @@ def _cone_inertia(sheet: FactSheet, part: Subject, mass: Samples) -> Samples:
 
 def _torus_inertia(sheet: FactSheet, part: Subject, mass: Samples) -> Samples:
     return sheet.apply(
-        inertia.torus_inertia, mass, sheet.value(part, "ring_diameter"), section_diameter=sheet.value(part, "section_diameter")
+        inertia.torus_inertia,
+        mass,
+        sheet.value(part, "ring_diameter"),
+        section_diameter=sheet.value(part, "section_diameter"),
     )
 
 
@@ -186,7 +207,10 @@ def _rod_tip(sheet: FactSheet, part: Subject) -> Samples:
 
 def _plate_tip(sheet: FactSheet, part: Subject) -> Samples:
     return sheet.apply(
-        outline.plate_tip_radius, sheet.value(part, "radial"), sheet.value(part, "tangential"), offset=optional(sheet, part, "offset")
+        outline.plate_tip_radius,
+        sheet.value(part, "radial"),
+        sheet.value(part, "tangential"),
+        offset=optional(sheet, part, "offset"),
     )
 
 

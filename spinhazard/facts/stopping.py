@@ -12,7 +12,7 @@ from spinhazard.facts.sheet import FactSheet
 from spinhazard.facts.subject import Subject
 from spinhazard.mechanics import coastdown, energy
 from spinhazard.quantity.stated import Stated
-from spinhazard.sampling import Samples
+from spinhazard.sampling import Samples, largest, smallest
 from spinhazard.statement.stopping import Brake
 
 
@@ -235,7 +235,13 @@ def energy_at_access(sheet: FactSheet, stop: Subject) -> Samples | None:
     return sheet.apply(energy.rotational_energy, sheet("referred_inertia"), speed_at(sheet, stop.entity, access))
 
 
-@fact(per="machine", unit="s", symbol="t_gov", equation="t_gov = max over the credible stop cases", source="policy credible_stops")
+@fact(
+    per="machine",
+    unit="s",
+    symbol="t_gov",
+    equation="t_gov = max over the credible stop cases",
+    source="policy credible_stops",
+)
 def governing_stopping_time(sheet: FactSheet, _machine: Subject) -> Samples:
     """Time of the slowest credible stop."""
     sheet.note("policy.credible_stops")
@@ -243,29 +249,33 @@ def governing_stopping_time(sheet: FactSheet, _machine: Subject) -> Samples:
     measured = sheet.where_applies("measured_stopping_time")
     if measured is not None:
         times.append(measured)
-    return np.maximum.reduce(np.broadcast_arrays(*times))
+    return largest(times)
 
 
 @fact(per="machine", word=True)
 def governing_stop(sheet: FactSheet, _machine: Subject) -> Word | None:
     """Stop case that governs."""
-    times = {stop.entity: float(sheet("stopping_time", stop)[0]) for stop in sheet.subjects.stops if stop.entity in sheet.rules.credible_stops}
+    times = {
+        stop.entity: float(sheet("stopping_time", stop)[0])
+        for stop in sheet.subjects.stops
+        if stop.entity in sheet.rules.credible_stops
+    }
     if any(np.isnan(time) for time in times.values()):
         return None
-    return max(times, key=lambda case: times[case])
+    return str(max(times, key=lambda case: times[case]))
 
 
 @fact(per="machine", unit="s", symbol="t_slow", equation="slowest stop case", source="practice")
 def slowest_stopping_time(sheet: FactSheet, _machine: Subject) -> Samples:
     """Time of the slowest stop case, credible or not."""
-    return np.maximum.reduce(np.broadcast_arrays(*(sheet("stopping_time", stop) for stop in sheet.subjects.stops)))
+    return largest([sheet("stopping_time", stop) for stop in sheet.subjects.stops])
 
 
 @fact(per="machine", symbol="t_slow/t_fast", equation="slowest over fastest stop case", source="iso-14119")
 def stop_variation(sheet: FactSheet, _machine: Subject) -> Samples:
     """Slowest over fastest stop case."""
-    times = np.broadcast_arrays(*(sheet("stopping_time", stop) for stop in sheet.subjects.stops))
-    return np.maximum.reduce(times) / np.maximum(np.minimum.reduce(times), 1e-9)
+    times = [sheet("stopping_time", stop) for stop in sheet.subjects.stops]
+    return largest(times) / np.maximum(smallest(times), 1e-9)
 
 
 @fact(per="machine", symbol="t_loss/t_normal", equation="t(power loss) / t(normal stop)", source="practice")

@@ -48,7 +48,9 @@ def peak_stress_at_max_speed(sheet: FactSheet, part: Subject) -> Samples | None:
     bore = _bore_radius(sheet, part)
     speed = sheet("shaft_max_speed", part.parent)
     if bore.max() == 0.0:
-        return sheet.apply(strength.solid_disk_stress, density, speed, radius=sheet("tip_radius", part), poisson=poisson)
+        return sheet.apply(
+            strength.solid_disk_stress, density, speed, radius=sheet("tip_radius", part), poisson=poisson
+        )
     return sheet.apply(
         strength.bored_disk_stress, density, speed, radius=sheet("tip_radius", part), bore_radius=bore, poisson=poisson
     )
@@ -114,7 +116,11 @@ def burst_speed(sheet: FactSheet, part: Subject) -> Samples | None:
     if stress is None or limit is None:
         return None
     return sheet.apply(
-        strength.burst_speed, sheet("shaft_max_speed", part.parent), limit, mean_stress=stress, burst_factor=sheet.policy("burst_factor")
+        strength.burst_speed,
+        sheet("shaft_max_speed", part.parent),
+        limit,
+        mean_stress=stress,
+        burst_factor=sheet.policy("burst_factor"),
     )
 
 

@@ -58,8 +58,15 @@ class Subjects:
         tuple of Subject
             The subjects.
         """
-        several = {"shaft": self.shafts, "part": self.parts, "stop": self.stops, "guard": self.guards}
-        return several[kind] if kind in several else (self.machine if kind == "machine" else self.lockout,)
+        by_kind = {
+            "machine": (self.machine,),
+            "shaft": self.shafts,
+            "part": self.parts,
+            "stop": self.stops,
+            "guard": self.guards,
+            "lockout": (self.lockout,),
+        }
+        return by_kind[kind]
 
     def all(self) -> tuple[Subject, ...]:
         """Every subject, machine first, lockout last.
@@ -126,7 +133,9 @@ def subjects_of(file: AssessmentFile) -> Subjects:
         machine=Subject("machine", "machine", "machine", file.machine),
         shafts=shafts,
         parts=parts,
-        stops=tuple(Subject("stop", f"stop:{case}", "stopping", case) for case in STOP_CASES if braked or case != "brake failed"),
+        stops=tuple(
+            Subject("stop", f"stop:{case}", "stopping", case) for case in STOP_CASES if braked or case != "brake failed"
+        ),
         guards=tuple(Subject("guard", f"guard:{guard.id}", f"guard.{guard.id}", guard) for guard in file.guards),
         lockout=Subject("lockout", "lockout", "lockout", file.lockout),
     )

@@ -42,7 +42,9 @@ def brake_heat(torque: ArrayLike, angle: ArrayLike) -> Array:
     equation="Q = J*(omega_0**2 - omega_1**2)/2 - W", unit="J",
     symbols={"inertia": "J", "start_speed": "omega_0", "end_speed": "omega_1", "drag_work": "W"}, source="openstax-up1 §10.8",
 )  # fmt: skip
-def absorbed_energy(inertia: ArrayLike, start_speed: ArrayLike, *, end_speed: ArrayLike, drag_work: ArrayLike = 0.0) -> Array:
+def absorbed_energy(
+    inertia: ArrayLike, start_speed: ArrayLike, *, end_speed: ArrayLike, drag_work: ArrayLike = 0.0
+) -> Array:
     """Energy a brake takes from a rotor between two speeds, less the work of the drag.
 
     Parameters
@@ -75,7 +77,10 @@ def absorbed_energy(inertia: ArrayLike, start_speed: ArrayLike, *, end_speed: Ar
 
 
 @formula(
-    equation="Delta_T = Q/(m*c)", unit="K", symbols={"heat": "Q", "mass": "m", "specific_heat": "c"}, source="openstax-up2 §1.4"
+    equation="Delta_T = Q/(m*c)",
+    unit="K",
+    symbols={"heat": "Q", "mass": "m", "specific_heat": "c"},
+    source="openstax-up2 §1.4",
 )
 def temperature_rise(heat: ArrayLike, mass: ArrayLike, *, specific_heat: ArrayLike) -> Array:
     """Mean temperature rise of a drum or disc that keeps all the heat: an upper bound of its mean, not of its surface.

@@ -15,7 +15,14 @@ from numpy.typing import ArrayLike
 from spinhazard.mechanics.arrays import Array, not_negative, positive
 from spinhazard.mechanics.formula import formula
 
-_SYMBOLS = {"inertia": "J", "start_speed": "omega_0", "end_speed": "omega_1", "constant": "a", "linear": "b", "quadratic": "c"}
+_SYMBOLS = {
+    "inertia": "J",
+    "start_speed": "omega_0",
+    "end_speed": "omega_1",
+    "constant": "a",
+    "linear": "b",
+    "quadratic": "c",
+}
 _NEAR_ZERO = 1e-3  # below it four terms of the series are exact to 1e-16
 _WELL_CONDITIONED = 1e-4  # share of the logarithm that must be left after the subtraction in the angle's closed form
 _NODES, _WEIGHTS = np.polynomial.legendre.leggauss(48)
@@ -30,7 +37,13 @@ def _checked(constant: ArrayLike, linear: ArrayLike, quadratic: ArrayLike) -> tu
 
 @formula(equation="see method: coastdown", unit="s", symbols=_SYMBOLS, source="spinhazard-methods coastdown")
 def stopping_time(
-    inertia: ArrayLike, start_speed: ArrayLike, *, end_speed: ArrayLike, constant: ArrayLike, linear: ArrayLike, quadratic: ArrayLike
+    inertia: ArrayLike,
+    start_speed: ArrayLike,
+    *,
+    end_speed: ArrayLike,
+    constant: ArrayLike,
+    linear: ArrayLike,
+    quadratic: ArrayLike,
 ) -> Array:
     """Time from one speed down to another under drag alone.
 
@@ -66,7 +79,12 @@ def stopping_time(
         u = drop / denominator
         z = (4.0 * a * c - b * b) * u * u
         at_start, at_end = a + b * start + c * start * start, a + b * end + c * end * end
-        time = 2.0 * positive("inertia", inertia, "kg m²") * u * _phi(z, 4.0 * at_start * at_end / (denominator * denominator))
+        time = (
+            2.0
+            * positive("inertia", inertia, "kg m²")
+            * u
+            * _phi(z, 4.0 * at_start * at_end / (denominator * denominator))
+        )
     return np.where(drop == 0.0, 0.0, np.where(at_end == 0.0, np.inf, time))
 
 
@@ -78,9 +96,20 @@ def _phi(z: Array, one_plus_z: Array) -> Array:
     return np.where(np.abs(z) < _NEAR_ZERO, series, np.where(z > 0.0, np.arctan(root) / root, negative))
 
 
-@formula(equation="see method: coastdown", unit="rad/s", symbols={"time": "t", **_SYMBOLS}, source="spinhazard-methods coastdown")
+@formula(
+    equation="see method: coastdown",
+    unit="rad/s",
+    symbols={"time": "t", **_SYMBOLS},
+    source="spinhazard-methods coastdown",
+)
 def speed_after(
-    time: ArrayLike, inertia: ArrayLike, *, start_speed: ArrayLike, constant: ArrayLike, linear: ArrayLike, quadratic: ArrayLike
+    time: ArrayLike,
+    inertia: ArrayLike,
+    *,
+    start_speed: ArrayLike,
+    constant: ArrayLike,
+    linear: ArrayLike,
+    quadratic: ArrayLike,
 ) -> Array:
     """Speed after coasting for a time: the inverse of :func:`stopping_time`.
 
@@ -128,7 +157,13 @@ def speed_after(
 
 @formula(equation="see method: coastdown", unit="rad", symbols=_SYMBOLS, source="spinhazard-methods coastdown")
 def angle_turned(
-    inertia: ArrayLike, start_speed: ArrayLike, *, end_speed: ArrayLike, constant: ArrayLike, linear: ArrayLike, quadratic: ArrayLike
+    inertia: ArrayLike,
+    start_speed: ArrayLike,
+    *,
+    end_speed: ArrayLike,
+    constant: ArrayLike,
+    linear: ArrayLike,
+    quadratic: ArrayLike,
 ) -> Array:
     """Angle turned from one speed down to another under drag alone, J∫ω dω/T.
 
@@ -180,7 +215,7 @@ def angle_turned(
 
 
 def _without_friction(body: Array, start: Array, end: Array, b: Array, c: Array) -> Array:
-    """a = 0: J∫dω/(b + cω), in a form that holds for c = 0 as well."""
+    """A = 0: J∫dω/(b + cω), in a form that holds for c = 0 as well."""
     y = c * (start - end) / (b + c * end)
     over = np.where(np.abs(y) < 1e-8, 1.0 - y / 2.0, np.log1p(y) / y)
     return np.where(np.isinf(y), np.inf, body * (start - end) / (b + c * end) * over)

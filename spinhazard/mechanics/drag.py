@@ -41,7 +41,9 @@ def torque_from_power(power: ArrayLike, speed: ArrayLike) -> Array:
     return not_negative("power", power, "W") / positive("speed", speed, "rad/s")
 
 
-@formula(equation="b = P/omega**2", unit="N m s", symbols={"power": "P", "speed": "omega"}, source="spinhazard-methods drag")
+@formula(
+    equation="b = P/omega**2", unit="N m s", symbols={"power": "P", "speed": "omega"}, source="spinhazard-methods drag"
+)
 def linear_drag_from_power(power: ArrayLike, speed: ArrayLike) -> Array:
     """Coefficient of a drag torque that grows with speed, from the power it takes at one speed.
 
@@ -70,7 +72,9 @@ def linear_drag_from_power(power: ArrayLike, speed: ArrayLike) -> Array:
     return not_negative("power", power, "W") / positive("speed", speed, "rad/s") ** 2
 
 
-@formula(equation="c = P/omega**3", unit="N m s²", symbols={"power": "P", "speed": "omega"}, source="spinhazard-methods drag")
+@formula(
+    equation="c = P/omega**3", unit="N m s²", symbols={"power": "P", "speed": "omega"}, source="spinhazard-methods drag"
+)
 def fan_drag_from_power(power: ArrayLike, speed: ArrayLike) -> Array:
     """Coefficient of a windage torque from the power it takes at one speed (fan law: power grows with speed cubed).
 
@@ -100,7 +104,10 @@ def fan_drag_from_power(power: ArrayLike, speed: ArrayLike) -> Array:
 
 
 @formula(
-    equation="a = J*omega/t", unit="N m", symbols={"inertia": "J", "speed": "omega", "time": "t"}, source="spinhazard-methods drag"
+    equation="a = J*omega/t",
+    unit="N m",
+    symbols={"inertia": "J", "speed": "omega", "time": "t"},
+    source="spinhazard-methods drag",
 )
 def friction_from_stop_time(inertia: ArrayLike, speed: ArrayLike, *, time: ArrayLike) -> Array:
     """Constant torque that gives the same stopping time as a measured coast.
@@ -173,7 +180,10 @@ def total_drag_torque(speed: ArrayLike, constant: ArrayLike, *, linear: ArrayLik
 
 
 @formula(
-    equation="Re = rho*omega*R**2/mu", unit="", symbols={"density": "rho", "speed": "omega", "radius": "R", "viscosity": "mu"}, source="schlichting ch. 5"
+    equation="Re = rho*omega*R**2/mu",
+    unit="",
+    symbols={"density": "rho", "speed": "omega", "radius": "R", "viscosity": "mu"},
+    source="schlichting ch. 5",
 )
 def reynolds_number(density: ArrayLike, speed: ArrayLike, *, radius: ArrayLike, viscosity: ArrayLike) -> Array:
     """Reynolds number of a disk turning in a fluid.
@@ -211,7 +221,10 @@ def reynolds_number(density: ArrayLike, speed: ArrayLike, *, radius: ArrayLike, 
 
 
 @formula(
-    equation="see method: drag", unit="N m", symbols={"density": "rho", "speed": "omega", "radius": "R", "viscosity": "mu"}, source="schlichting ch. 5, 21"
+    equation="see method: drag",
+    unit="N m",
+    symbols={"density": "rho", "speed": "omega", "radius": "R", "viscosity": "mu"},
+    source="schlichting ch. 5, 21",
 )
 def disk_windage_torque(density: ArrayLike, speed: ArrayLike, *, radius: ArrayLike, viscosity: ArrayLike) -> Array:
     """Torque on both faces of a smooth disk turning freely in a fluid, T = C ½ρω²R⁵ (von Kármán).
@@ -246,7 +259,10 @@ def disk_windage_torque(density: ArrayLike, speed: ArrayLike, *, radius: ArrayLi
 
 
 @formula(
-    equation="M = mu*P*d/2", unit="N m", symbols={"coefficient": "mu", "load": "P", "bore": "d"}, source="practice rolling bearings"
+    equation="M = mu*P*d/2",
+    unit="N m",
+    symbols={"coefficient": "mu", "load": "P", "bore": "d"},
+    source="practice rolling bearings",
 )
 def bearing_friction_torque(coefficient: ArrayLike, load: ArrayLike, *, bore: ArrayLike) -> Array:
     """Friction torque of a rolling bearing from its load; coefficients of 0.001 to 0.005 are usual (common practice).
@@ -275,4 +291,9 @@ def bearing_friction_torque(coefficient: ArrayLike, load: ArrayLike, *, bore: Ar
     >>> print(bearing_friction_torque(0.002, 10000.0, bore=0.1))
     1.0
     """  # noqa: DOC502
-    return not_negative("coefficient", coefficient, "") * not_negative("load", load, "N") * positive("bore", bore, "m") / 2.0
+    return (
+        not_negative("coefficient", coefficient, "")
+        * not_negative("load", load, "N")
+        * positive("bore", bore, "m")
+        / 2.0
+    )

@@ -38,7 +38,9 @@ def rotational_energy(inertia: ArrayLike, speed: ArrayLike) -> Array:
     return not_negative("inertia", inertia, "kg m²") * np.asarray(speed, dtype=np.float64) ** 2 / 2.0
 
 
-@formula(equation="L = J*omega", unit="kg m²/s", symbols={"inertia": "J", "speed": "omega"}, source="openstax-up1 §11.2")
+@formula(
+    equation="L = J*omega", unit="kg m²/s", symbols={"inertia": "J", "speed": "omega"}, source="openstax-up1 §11.2"
+)
 def angular_momentum(inertia: ArrayLike, speed: ArrayLike) -> Array:
     """Angular momentum of a rigid body about its axis.
 
@@ -96,7 +98,9 @@ def tip_speed(speed: ArrayLike, radius: ArrayLike) -> Array:
     return np.asarray(speed, dtype=np.float64) * not_negative("radius", radius, "m")
 
 
-@formula(equation="omega = sqrt(2*E/J)", unit="rad/s", symbols={"energy": "E", "inertia": "J"}, source="openstax-up1 §10.4")
+@formula(
+    equation="omega = sqrt(2*E/J)", unit="rad/s", symbols={"energy": "E", "inertia": "J"}, source="openstax-up1 §10.4"
+)
 def speed_from_energy(energy: ArrayLike, inertia: ArrayLike) -> Array:
     """Speed at which a body stores a given energy.
 
@@ -125,7 +129,9 @@ def speed_from_energy(energy: ArrayLike, inertia: ArrayLike) -> Array:
     return np.sqrt(2.0 * not_negative("energy", energy, "J") / positive("inertia", inertia, "kg m²"))
 
 
-@formula(equation="k = sqrt(J/m)", unit="m", symbols={"inertia": "J", "mass": "m"}, source="beer-johnston-dynamics app. B")
+@formula(
+    equation="k = sqrt(J/m)", unit="m", symbols={"inertia": "J", "mass": "m"}, source="beer-johnston-dynamics app. B"
+)
 def gyration_radius(inertia: ArrayLike, mass: ArrayLike) -> Array:
     """Radius at which all mass would give the same inertia.
 

@@ -64,7 +64,12 @@ REGISTRY: dict[str, Formula] = {}
 
 
 def formula(
-    *, equation: str, unit: str, symbols: Mapping[str, str], source: str, valid: Mapping[str, tuple[float, float]] | None = None
+    *,
+    equation: str,
+    unit: str,
+    symbols: Mapping[str, str],
+    source: str,
+    valid: Mapping[str, tuple[float, float]] | None = None,
 ) -> Callable[[Function], Function]:
     """Attach a record to a function, which is returned unchanged.
 
@@ -81,7 +86,9 @@ def formula(
 
     def attach(function: Function) -> Function:
         name = f"{function.__module__.rpartition('.')[2]}.{function.__name__}"
-        made = Formula(name=name, equation=equation, unit=unit, symbols=dict(symbols), source=source, valid=dict(valid or {}))
+        made = Formula(
+            name=name, equation=equation, unit=unit, symbols=dict(symbols), source=source, valid=dict(valid or {})
+        )
         setattr(function, _ATTRIBUTE, made)
         REGISTRY[name] = made
         return function
@@ -159,40 +166,40 @@ def _leading_half(text: str) -> str:
 
 def _raised(text: str, product: str, name: Callable[[str], str]) -> str:
     out: list[str] = []
-    tokens = re.findall(r"½|" + _TOKEN.pattern, text)
+    pieces = re.findall(r"½|" + _TOKEN.pattern, text)
     index = 0
-    while index < len(tokens):
-        token = tokens[index]
-        if token == "**":
+    while index < len(pieces):
+        piece = pieces[index]
+        if piece == "**":
             index += 1
-            out.append(_exponent(tokens[index :]))
-            index += _exponent_length(tokens[index:]) - 1
-        elif token == "*":
+            out.append(_exponent(pieces[index:]))
+            index += _exponent_length(pieces[index:]) - 1
+        elif piece == "*":
             out.append(product)
-        elif token in {"+", "-"}:
+        elif piece in {"+", "-"}:
             unary = not out or out[-1].rstrip() in {"(", "", "=", ","} or out[-1].endswith("(")
-            sign = "−" if token == "-" else "+"
+            sign = "−" if piece == "-" else "+"
             out.append(sign if unary else f" {sign} ")
-        elif token == ",":
+        elif piece == ",":
             out.append(", ")
-        elif token == "sqrt":
+        elif piece == "sqrt":
             out.append("√")
-        elif _NAME.fullmatch(token):
-            out.append(name(token))
+        elif _NAME.fullmatch(piece):
+            out.append(name(piece))
         else:
-            out.append(token)
+            out.append(piece)
         index += 1
     return "".join(out)
 
 
-def _exponent_length(tokens: list[str]) -> int:
-    return tokens.index(")") + 1 if tokens[0] == "(" else 1
+def _exponent_length(pieces: list[str]) -> int:
+    return pieces.index(")") + 1 if pieces[0] == "(" else 1
 
 
-def _exponent(tokens: list[str]) -> str:
-    if tokens[0] == "(":
-        return "^(" + "".join(tokens[1 : tokens.index(")")]).replace("-", "−") + ")"
-    return tokens[0].translate(_SUPERSCRIPT)
+def _exponent(pieces: list[str]) -> str:
+    if pieces[0] == "(":
+        return "^(" + "".join(pieces[1 : pieces.index(")")]).replace("-", "−") + ")"
+    return pieces[0].translate(_SUPERSCRIPT)
 
 
 def with_numbers(formula: Formula, texts: Mapping[str, str]) -> str:

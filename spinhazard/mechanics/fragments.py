@@ -54,7 +54,12 @@ def sector_centroid_radius(outer_radius: ArrayLike, inner_radius: ArrayLike, *, 
     return 2.0 / 3.0 * (outer**2 + outer * inner + inner**2) / (outer + inner) * np.sin(half) / half
 
 
-@formula(equation="m_f = m*theta/(2*pi)", unit="kg", symbols={"mass": "m", "angle": "theta"}, source="spinhazard-methods fragments")
+@formula(
+    equation="m_f = m*theta/(2*pi)",
+    unit="kg",
+    symbols={"mass": "m", "angle": "theta"},
+    source="spinhazard-methods fragments",
+)
 def sector_mass(mass: ArrayLike, angle: ArrayLike) -> Array:
     """Mass of a sector of a disk or ring.
 
@@ -83,7 +88,9 @@ def sector_mass(mass: ArrayLike, angle: ArrayLike) -> Array:
     return not_negative("mass", mass, "kg") * positive("angle", angle, "rad") / (2.0 * np.pi)
 
 
-@formula(equation="v_f = omega*r_c", unit="m/s", symbols={"speed": "omega", "radius": "r_c"}, source="openstax-up1 §10.3")
+@formula(
+    equation="v_f = omega*r_c", unit="m/s", symbols={"speed": "omega", "radius": "r_c"}, source="openstax-up1 §10.3"
+)
 def fragment_speed(speed: ArrayLike, radius: ArrayLike) -> Array:
     """Speed at which a loose piece leaves, along the tangent: that of its centre of mass while it was still held.
 
@@ -142,7 +149,10 @@ def fragment_energy(mass: ArrayLike, speed: ArrayLike) -> Array:
 
 
 @formula(
-    equation="F = m*r*omega**2", unit="N", symbols={"mass": "m", "radius": "r", "speed": "omega"}, source="openstax-up1 §6.3"
+    equation="F = m*r*omega**2",
+    unit="N",
+    symbols={"mass": "m", "radius": "r", "speed": "omega"},
+    source="openstax-up1 §6.3",
 )
 def unbalance_force(mass: ArrayLike, radius: ArrayLike, *, speed: ArrayLike) -> Array:
     """Rotating force on the shaft after a piece is lost.
@@ -171,10 +181,14 @@ def unbalance_force(mass: ArrayLike, radius: ArrayLike, *, speed: ArrayLike) -> 
     >>> print(unbalance_force(2.0, 0.5, speed=100.0))
     10000.0
     """  # noqa: DOC502
-    return not_negative("mass", mass, "kg") * not_negative("radius", radius, "m") * not_negative("speed", speed, "rad/s") ** 2
+    return (
+        not_negative("mass", mass, "kg")
+        * not_negative("radius", radius, "m")
+        * not_negative("speed", speed, "rad/s") ** 2
+    )
 
 
-_PERFORATION = 672.0 * _FOOT_POUND ** (2.0 / 3.0) / _INCH**2  # T[in] = E[ft lbf]^(2/3)/(672 D[in]) brought to SI
+_PERFORATION: float = 672.0 * _FOOT_POUND ** (2.0 / 3.0) / _INCH**2  # T[in] = E[ft lbf]^(2/3)/(672 D[in]) brought to SI
 
 
 @formula(
@@ -237,8 +251,15 @@ def design_thickness(thickness: ArrayLike) -> Array:
     return DESIGN_FACTOR * not_negative("thickness", thickness, "m")
 
 
-@formula(equation="see method: fragments", unit="m", symbols={"energy": "E", "diameter": "D", "strength": "S", "span": "W"}, source="bc-top-9a §2")
-def stanford_perforation_thickness(energy: ArrayLike, diameter: ArrayLike, *, strength: ArrayLike, span: ArrayLike) -> Array:
+@formula(
+    equation="see method: fragments",
+    unit="m",
+    symbols={"energy": "E", "diameter": "D", "strength": "S", "span": "W"},
+    source="bc-top-9a §2",
+)
+def stanford_perforation_thickness(
+    energy: ArrayLike, diameter: ArrayLike, *, strength: ArrayLike, span: ArrayLike
+) -> Array:
     """Thickness of steel plate that a piece just perforates, Stanford Research Institute form.
 
     E/D = (S/46 500)(16 000 T² + 1 500 (W/4) T) with E in ft lbf, lengths in inches, S in psi; the positive root.

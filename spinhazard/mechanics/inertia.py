@@ -14,7 +14,10 @@ from spinhazard.mechanics.polygon import revolved_moments
 
 
 @formula(
-    equation="J = m*(D**2 + d**2)/8", unit="kg m²", symbols={"mass": "m", "diameter": "D", "bore": "d"}, source="openstax-up1 fig. 10.20"
+    equation="J = m*(D**2 + d**2)/8",
+    unit="kg m²",
+    symbols={"mass": "m", "diameter": "D", "bore": "d"},
+    source="openstax-up1 fig. 10.20",
 )
 def disk_inertia(mass: ArrayLike, diameter: ArrayLike, *, bore: ArrayLike = 0.0) -> Array:
     """Disk, cylinder or ring of any wall about its axis.
@@ -116,7 +119,10 @@ def crossways_rod_inertia(mass: ArrayLike, length: ArrayLike) -> Array:
 
 
 @formula(
-    equation="J = m*(a**2 + b**2)/12", unit="kg m²", symbols={"mass": "m", "radial": "a", "tangential": "b"}, source="beer-johnston-dynamics app. B"
+    equation="J = m*(a**2 + b**2)/12",
+    unit="kg m²",
+    symbols={"mass": "m", "radial": "a", "tangential": "b"},
+    source="beer-johnston-dynamics app. B",
 )
 def plate_inertia(mass: ArrayLike, radial: ArrayLike, *, tangential: ArrayLike) -> Array:
     """Rectangular plate or block about the axis through its middle parallel to the shaft.
@@ -151,7 +157,9 @@ def plate_inertia(mass: ArrayLike, radial: ArrayLike, *, tangential: ArrayLike) 
     equation="J = m*((D**4 + D**3*d + D**2*d**2 + D*d**3 + d**4)/5 - b**4)/(8*((D**2 + D*d + d**2)/3 - b**2))",
     unit="kg m²", symbols={"mass": "m", "large_diameter": "D", "small_diameter": "d", "bore": "b"}, source="spinhazard-methods inertia",
 )  # fmt: skip
-def frustum_inertia(mass: ArrayLike, large_diameter: ArrayLike, *, small_diameter: ArrayLike, bore: ArrayLike = 0.0) -> Array:
+def frustum_inertia(
+    mass: ArrayLike, large_diameter: ArrayLike, *, small_diameter: ArrayLike, bore: ArrayLike = 0.0
+) -> Array:
     """Cone or frustum about its axis, solid or with a cylindrical bore.
 
     Parameters
@@ -253,7 +261,12 @@ def point_inertia(mass: ArrayLike, radius: ArrayLike) -> Array:
     return not_negative("mass", mass, "kg") * not_negative("radius", radius, "m") ** 2
 
 
-@formula(equation="J = J_0 + m*h**2", unit="kg m²", symbols={"inertia": "J_0", "mass": "m", "offset": "h"}, source="openstax-up1 §10.5")
+@formula(
+    equation="J = J_0 + m*h**2",
+    unit="kg m²",
+    symbols={"inertia": "J_0", "mass": "m", "offset": "h"},
+    source="openstax-up1 §10.5",
+)
 def offset_inertia(inertia: ArrayLike, mass: ArrayLike, *, offset: ArrayLike) -> Array:
     """Parallel-axis theorem: about an axis at a distance from the centre of mass.
 
@@ -281,7 +294,10 @@ def offset_inertia(inertia: ArrayLike, mass: ArrayLike, *, offset: ArrayLike) ->
     >>> print(offset_inertia(1.0, 2.0, offset=3.0))
     19.0
     """  # noqa: DOC502
-    return not_negative("inertia", inertia, "kg m²") + not_negative("mass", mass, "kg") * not_negative("offset", offset, "m") ** 2
+    return (
+        not_negative("inertia", inertia, "kg m²")
+        + not_negative("mass", mass, "kg") * not_negative("offset", offset, "m") ** 2
+    )
 
 
 @formula(equation="J = N*J_1", unit="kg m²", symbols={"inertia": "J_1", "count": "N"}, source="openstax-up1 §10.5")
@@ -313,7 +329,9 @@ def pattern_inertia(inertia: ArrayLike, count: ArrayLike) -> Array:
     return not_negative("inertia", inertia, "kg m²") * positive("count", count, "")
 
 
-@formula(equation="J_r = J*i**2", unit="kg m²", symbols={"inertia": "J", "ratio": "i"}, source="spinhazard-methods inertia")
+@formula(
+    equation="J_r = J*i**2", unit="kg m²", symbols={"inertia": "J", "ratio": "i"}, source="spinhazard-methods inertia"
+)
 def referred_inertia(inertia: ArrayLike, ratio: ArrayLike) -> Array:
     """Inertia of a geared shaft as felt at the reference shaft: equal kinetic energy at ω_shaft = i ω_reference.
 

@@ -9,7 +9,9 @@ from spinhazard.mechanics.arrays import Array, not_negative, positive
 from spinhazard.mechanics.formula import formula
 
 
-@formula(equation="R = h + D/2", unit="m", symbols={"diameter": "D", "offset": "h"}, source="spinhazard-methods inertia")
+@formula(
+    equation="R = h + D/2", unit="m", symbols={"diameter": "D", "offset": "h"}, source="spinhazard-methods inertia"
+)
 def disk_tip_radius(diameter: ArrayLike, *, offset: ArrayLike = 0.0) -> Array:
     """Far side of a round piece (disk, ring, sphere, torus) whose centre is off the axis by `offset`.
 
@@ -100,7 +102,12 @@ def radial_rod_tip_radius(length: ArrayLike, *, offset: ArrayLike = 0.0) -> Arra
     return not_negative("offset", offset, "m") + positive("length", length, "m") / 2.0
 
 
-@formula(equation="R = sqrt(h**2 + (L/2)**2)", unit="m", symbols={"length": "L", "offset": "h"}, source="spinhazard-methods inertia")
+@formula(
+    equation="R = sqrt(h**2 + (L/2)**2)",
+    unit="m",
+    symbols={"length": "L", "offset": "h"},
+    source="spinhazard-methods inertia",
+)
 def tangential_rod_tip_radius(length: ArrayLike, *, offset: ArrayLike = 0.0) -> Array:
     """Ends of a rod that lies in the direction of motion.
 

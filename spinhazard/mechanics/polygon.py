@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 import numpy as np
-from numpy.typing import ArrayLike
+from numpy.typing import ArrayLike, NDArray
 
 from spinhazard.mechanics.arrays import Array
 
@@ -70,11 +70,11 @@ def crosses_itself(r: Array, z: Array) -> bool:
     return False
 
 
-def _meet(a: Array, b: Array, c: Array, d: Array) -> Array:
+def _meet(a: Array, b: Array, c: Array, d: Array) -> NDArray[np.bool_]:
     """Whether segment ab properly crosses each of the segments cd; touching on the axis is allowed for ring sections."""
     side_c, side_d = _side(a, b, c), _side(a, b, d)
     side_a, side_b = _side(c, d, a), _side(c, d, b)
-    crossing: Array = (side_c * side_d < 0.0) & (side_a * side_b < 0.0)
+    crossing: NDArray[np.bool_] = (side_c * side_d < 0.0) & (side_a * side_b < 0.0)
     return crossing
 
 

@@ -18,7 +18,10 @@ US_HAND_SPEED = 63.0 * 0.0254
 
 
 @formula(
-    equation="t = Max(S - C, 0)/K", unit="s", symbols={"distance": "S", "approach_speed": "K", "intrusion": "C"}, source="iso-13855 cl. 5"
+    equation="t = Max(S - C, 0)/K",
+    unit="s",
+    symbols={"distance": "S", "approach_speed": "K", "intrusion": "C"},
+    source="iso-13855 cl. 5",
 )
 def reach_time(distance: ArrayLike, approach_speed: ArrayLike, *, intrusion: ArrayLike = 0.0) -> Array:
     """Least time in which a person covers a distance.
@@ -52,7 +55,10 @@ def reach_time(distance: ArrayLike, approach_speed: ArrayLike, *, intrusion: Arr
 
 
 @formula(
-    equation="S = K*T + C", unit="m", symbols={"approach_speed": "K", "time": "T", "intrusion": "C"}, source="iso-13855 cl. 5"
+    equation="S = K*T + C",
+    unit="m",
+    symbols={"approach_speed": "K", "time": "T", "intrusion": "C"},
+    source="iso-13855 cl. 5",
 )
 def separation_distance(approach_speed: ArrayLike, time: ArrayLike, *, intrusion: ArrayLike = 0.0) -> Array:
     """Distance at which the hazard has ended before it is reached.

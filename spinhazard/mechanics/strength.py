@@ -9,7 +9,9 @@ from spinhazard.mechanics.arrays import Array, below, not_negative, positive
 from spinhazard.mechanics.formula import formula
 
 
-@formula(equation="sigma_t = rho*v**2", unit="Pa", symbols={"density": "rho", "speed": "v"}, source="timoshenko-som2 ch. VI")
+@formula(
+    equation="sigma_t = rho*v**2", unit="Pa", symbols={"density": "rho", "speed": "v"}, source="timoshenko-som2 ch. VI"
+)
 def thin_rim_stress(density: ArrayLike, speed: ArrayLike) -> Array:
     """Hoop stress of a thin rim; it does not depend on the section or the radius, only on the rim speed.
 
@@ -187,12 +189,19 @@ def burst_speed(speed: ArrayLike, strength: ArrayLike, *, mean_stress: ArrayLike
     >>> print(burst_speed(100.0, 400e6, mean_stress=75e6, burst_factor=0.75))
     200.0
     """  # noqa: DOC502
-    share = positive("burst_factor", burst_factor, "") * positive("strength", strength, "Pa") / positive("mean_stress", mean_stress, "Pa")
+    share = (
+        positive("burst_factor", burst_factor, "")
+        * positive("strength", strength, "Pa")
+        / positive("mean_stress", mean_stress, "Pa")
+    )
     return positive("speed", speed, "rad/s") * np.sqrt(share)
 
 
 @formula(
-    equation="n = omega_b/omega_max", unit="", symbols={"burst_speed": "omega_b", "highest_speed": "omega_max"}, source="robinson-1944"
+    equation="n = omega_b/omega_max",
+    unit="",
+    symbols={"burst_speed": "omega_b", "highest_speed": "omega_max"},
+    source="robinson-1944",
 )
 def speed_margin(burst_speed: ArrayLike, highest_speed: ArrayLike) -> Array:
     """Burst speed over highest attainable speed.

@@ -10,7 +10,10 @@ from spinhazard.mechanics.formula import formula
 
 
 @formula(
-    equation="V = pi*(D**2 - d**2)*t/4", unit="m³", symbols={"diameter": "D", "thickness": "t", "bore": "d"}, source="beer-johnston-dynamics app. B"
+    equation="V = pi*(D**2 - d**2)*t/4",
+    unit="m³",
+    symbols={"diameter": "D", "thickness": "t", "bore": "d"},
+    source="beer-johnston-dynamics app. B",
 )
 def disk_volume(diameter: ArrayLike, thickness: ArrayLike, *, bore: ArrayLike = 0.0) -> Array:
     """Disk, cylinder or ring.
@@ -42,7 +45,12 @@ def disk_volume(diameter: ArrayLike, thickness: ArrayLike, *, bore: ArrayLike = 
     return np.pi * (outer - inner) * (outer + inner) * positive("thickness", thickness, "m") / 4.0
 
 
-@formula(equation="V = pi*(D**3 - d**3)/6", unit="m³", symbols={"diameter": "D", "inner_diameter": "d"}, source="beer-johnston-dynamics app. B")
+@formula(
+    equation="V = pi*(D**3 - d**3)/6",
+    unit="m³",
+    symbols={"diameter": "D", "inner_diameter": "d"},
+    source="beer-johnston-dynamics app. B",
+)
 def sphere_volume(diameter: ArrayLike, *, inner_diameter: ArrayLike = 0.0) -> Array:
     """Sphere, solid or hollow.
 
@@ -74,7 +82,10 @@ def sphere_volume(diameter: ArrayLike, *, inner_diameter: ArrayLike = 0.0) -> Ar
 
 
 @formula(
-    equation="V = a*l*b", unit="m³", symbols={"radial": "a", "axial": "l", "tangential": "b"}, source="beer-johnston-dynamics app. B"
+    equation="V = a*l*b",
+    unit="m³",
+    symbols={"radial": "a", "axial": "l", "tangential": "b"},
+    source="beer-johnston-dynamics app. B",
 )
 def plate_volume(radial: ArrayLike, axial: ArrayLike, *, tangential: ArrayLike) -> Array:
     """Rectangular plate or block.
@@ -106,7 +117,9 @@ def plate_volume(radial: ArrayLike, axial: ArrayLike, *, tangential: ArrayLike) 
     equation="V = pi*l*((D**2 + D*d + d**2)/3 - b**2)/4", unit="m³",
     symbols={"large_diameter": "D", "small_diameter": "d", "length": "l", "bore": "b"}, source="beer-johnston-dynamics app. B",
 )  # fmt: skip
-def frustum_volume(large_diameter: ArrayLike, small_diameter: ArrayLike, *, length: ArrayLike, bore: ArrayLike = 0.0) -> Array:
+def frustum_volume(
+    large_diameter: ArrayLike, small_diameter: ArrayLike, *, length: ArrayLike, bore: ArrayLike = 0.0
+) -> Array:
     """Cone or frustum, solid or with a cylindrical bore.
 
     Parameters
@@ -141,7 +154,10 @@ def frustum_volume(large_diameter: ArrayLike, small_diameter: ArrayLike, *, leng
 
 
 @formula(
-    equation="V = pi**2*D*d**2/4", unit="m³", symbols={"ring_diameter": "D", "section_diameter": "d"}, source="beer-johnston-dynamics app. B"
+    equation="V = pi**2*D*d**2/4",
+    unit="m³",
+    symbols={"ring_diameter": "D", "section_diameter": "d"},
+    source="beer-johnston-dynamics app. B",
 )
 def torus_volume(ring_diameter: ArrayLike, section_diameter: ArrayLike) -> Array:
     """Ring of round section.
@@ -168,7 +184,12 @@ def torus_volume(ring_diameter: ArrayLike, section_diameter: ArrayLike) -> Array
     >>> print(f"{torus_volume(2.0, 0.2):.6f}")
     0.197392
     """  # noqa: DOC502
-    return np.pi**2 * positive("ring_diameter", ring_diameter, "m") * positive("section_diameter", section_diameter, "m") ** 2 / 4.0
+    return (
+        np.pi**2
+        * positive("ring_diameter", ring_diameter, "m")
+        * positive("section_diameter", section_diameter, "m") ** 2
+        / 4.0
+    )
 
 
 @formula(equation="m = rho*V", unit="kg", symbols={"density": "rho", "volume": "V"}, source="openstax-up1 §1.4")

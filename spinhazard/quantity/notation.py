@@ -20,7 +20,9 @@ from spinhazard.quantity.units import KINDS, Kind, UnitRefused, to_si
 
 LONGEST_TEXT = 100
 LARGEST_MAGNITUDE = 1e30
-_NUMBER = re.compile(r"[+-]?(?:\d{1,15} \d{1,4}/\d{1,4}|\d{1,4}/\d{1,4}|(?:\d{1,20}(?:\.\d{0,20})?|\.\d{1,20})(?:[eE][+-]?\d{1,3})?)")
+_NUMBER = re.compile(
+    r"[+-]?(?:\d{1,15} \d{1,4}/\d{1,4}|\d{1,4}/\d{1,4}|(?:\d{1,20}(?:\.\d{0,20})?|\.\d{1,20})(?:[eE][+-]?\d{1,3})?)"
+)
 _TOLERANCE = re.compile(r"±|\+\s?/\s?-|\+-")
 _COVERAGE = re.compile(r"[(,;]?\s?\bk\s?=\s?(\d{1,2}(?:\.\d{1,4})?)\s?\)?\Z")
 _COMMA = re.compile(r"\d,\d")
@@ -39,7 +41,9 @@ class NotationError(ValueError):
     def __init__(self, problem: str, kind: Kind) -> None:
         super().__init__(problem)
         self.problem = problem
-        self.accepted = f'{kind.what}, for example {kind.example if kind.name == "ratio" else chr(34) + kind.example + chr(34)}'
+        self.accepted = (
+            f"{kind.what}, for example {kind.example if kind.name == 'ratio' else chr(34) + kind.example + chr(34)}"
+        )
 
 
 def parse_stated(text: str | float, kind_name: str) -> Stated:
@@ -73,7 +77,9 @@ def parse_stated(text: str | float, kind_name: str) -> Stated:
     if not plain:
         raise NotationError("empty", kind)
     if _COMMA.search(plain):
-        raise NotationError("a comma between digits is not read: write a decimal point, and no thousands separator", kind)
+        raise NotationError(
+            "a comma between digits is not read: write a decimal point, and no thousands separator", kind
+        )
     if _SPACED.match(plain):
         raise NotationError("a space between digits is not read: write the number without thousands separator", kind)
     try:
@@ -148,7 +154,7 @@ def _amount(text: str, kind: Kind) -> tuple[float, str]:
         raise NotationError("no number at the start", kind)
     number = _number(match[0], kind)
     unit = text[match.end() :].strip()
-    if unit[:1] in {".", ",", "+", "*"} or unit[:1].isdigit() and not unit.startswith("1/"):
+    if unit[:1] in {".", ",", "+", "*"} or (unit[:1].isdigit() and not unit.startswith("1/")):
         raise NotationError(f'"{text[:40]}" is not one number with one unit', kind)
     return number, unit
 

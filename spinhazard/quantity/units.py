@@ -236,7 +236,9 @@ def factor_to_si(unit: str, kind_name: str) -> float:
         factor *= one**power
         dimension = [total + power * axis for total, axis in zip(dimension, axes, strict=True)]
     if tuple(dimension) != kind.dimension:
-        raise UnitRefused(f'"{unit}" is the unit of {_what_it_measures(unit, tuple(dimension))}', _trade_hint(unit, kind))
+        raise UnitRefused(
+            f'"{unit}" is the unit of {_what_it_measures(unit, tuple(dimension))}', _trade_hint(unit, kind)
+        )
     return factor
 
 
@@ -257,7 +259,9 @@ def _listed_factor(unit: str, kind: Kind) -> float:
     try:
         dimension = dimension_of(unit)
     except UnitRefused as error:
-        raise UnitRefused(f'"{unit}" is not known as a unit of {kind.what.removeprefix("a ").removeprefix("an ")}', error.hint) from None
+        raise UnitRefused(
+            f'"{unit}" is not known as a unit of {kind.what.removeprefix("a ").removeprefix("an ")}', error.hint
+        ) from None
     raise UnitRefused(f'"{unit}" is the unit of {_what_it_measures(unit, dimension)}')
 
 

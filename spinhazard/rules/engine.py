@@ -19,7 +19,13 @@ from spinhazard.statement.policy import Policy
 
 Lookup = Callable[[str], Fact | None]
 """Fact of a key for the subject at hand; None where it does not apply."""
-_NEGATED = {"exceeds": "does not exceed", "is below": "is not below", "is": "is not", "is not": "is", "is one of": "is none of"}
+_NEGATED = {
+    "exceeds": "does not exceed",
+    "is below": "is not below",
+    "is": "is not",
+    "is not": "is",
+    "is one of": "is none of",
+}
 
 
 @dataclass(frozen=True)
@@ -127,7 +133,9 @@ def judge(rule: Rule, subject: str, lookup: Lookup, policy: Policy, *, system: S
     if share > (1.0 - policy.coverage) / 2.0 + 1e-12:
         return view.finding(subject, "borderline", share, f"{view.message()} {_borderline_note(share)}")
     if view.outside():
-        return view.finding(subject, "borderline", share, f"{view.why_not(rule.review, 'Not met')} {_outside_note(view.outside())}")
+        return view.finding(
+            subject, "borderline", share, f"{view.why_not(rule.review, 'Not met')} {_outside_note(view.outside())}"
+        )
     return view.finding(subject, "not flagged", share, view.why_not((*rule.applies, *rule.review), "Not met"))
 
 
@@ -174,7 +182,8 @@ class _View:
 
     def _is_alternative(self, line: Comparison) -> bool:
         return any(
-            isinstance(condition, Alternatives) and line in condition.conditions for condition in (*self._rule.applies, *self._rule.review)
+            isinstance(condition, Alternatives) and line in condition.conditions
+            for condition in (*self._rule.applies, *self._rule.review)
         )
 
     def _compare_numbers(self, fact: Fact, line: Comparison) -> logic.Truth:
@@ -196,12 +205,16 @@ class _View:
         setting = getattr(self._policy, line.operand.name)
         return setting.value if isinstance(setting, Stated) else float(setting)
 
-    def finding(self, subject: str, outcome: Outcome, share: float, says: str, *, missing: tuple[str, ...] = ()) -> Finding:
+    def finding(
+        self, subject: str, outcome: Outcome, share: float, says: str, *, missing: tuple[str, ...] = ()
+    ) -> Finding:
         seen = tuple(f"{fact.key}|{fact.subject}" for fact in self._seen.values() if fact is not None)
         return Finding(self._rule, subject, outcome, share, says, missing, self.outside(), seen)
 
     def outside(self) -> tuple[str, ...]:
-        return tuple(dict.fromkeys(breach for fact in self._seen.values() if fact is not None for breach in fact.outside))
+        return tuple(
+            dict.fromkeys(breach for fact in self._seen.values() if fact is not None for breach in fact.outside)
+        )
 
     def missing(self, _met: logic.Truth) -> tuple[str, ...]:
         """Fields behind the comparisons that could not be decided."""
@@ -263,7 +276,7 @@ def _words_agree(value: FactValue, line: Comparison) -> bool:
     stated = ", ".join(value) if isinstance(value, tuple) else value
     if line.word == "is one of":
         return stated in line.operand.value
-    return (stated == line.operand.value) == (line.word == "is")
+    return bool(stated == line.operand.value) == (line.word == "is")
 
 
 def shown(fact: Fact | None, system: System) -> str:

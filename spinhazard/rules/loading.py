@@ -20,7 +20,17 @@ from spinhazard.quantity.notation import NotationError, parse_stated
 from spinhazard.quantity.stated import Stated
 from spinhazard.rules.levers import is_lever
 from spinhazard.rules.rule import (
-    EACH, FORBIDDEN_NAMES, OUTCOMES, URGENCIES, WORDS, Alternatives, Comparison, Condition, Example, Operand, Rule,
+    EACH,
+    FORBIDDEN_NAMES,
+    OUTCOMES,
+    URGENCIES,
+    WORDS,
+    Alternatives,
+    Comparison,
+    Condition,
+    Example,
+    Operand,
+    Rule,
 )  # fmt: skip
 from spinhazard.sources import resolve
 from spinhazard.statement.policy import Policy
@@ -66,7 +76,12 @@ class Catalogue:
         keys = [rule.key for rule in self.rules]
         near = difflib.get_close_matches(key[:80], keys, n=1, cutoff=0.3)
         raise CatalogueError(
-            Complaint("no rule has this key", stated=quoted(key), accepted="a key that `spinhazard rules` lists", nearest=near[0] if near else "")
+            Complaint(
+                "no rule has this key",
+                stated=quoted(key),
+                accepted="a key that `spinhazard rules` lists",
+                nearest=near[0] if near else "",
+            )
         )
 
 
@@ -92,7 +107,9 @@ def _refuse_twice(rules: Sequence[Rule]) -> None:
     seen: set[str] = set()
     for rule in rules:
         if rule.key in seen:
-            raise CatalogueError(Complaint("two rules have the same key", file=f"{rule.family}.toml", stated=quoted(rule.key)))
+            raise CatalogueError(
+                Complaint("two rules have the same key", file=f"{rule.family}.toml", stated=quoted(rule.key))
+            )
         seen.add(rule.key)
 
 
@@ -131,9 +148,14 @@ def load_rules(text: str, *, name: str, family: str) -> list[Rule]:
         except _RuleFault as fault:
             complaints.append(
                 Complaint(
-                    fault.problem, file=name, line=_line(text, index), field=f"{entry.get('key', f'rule {index + 1}')}.{fault.field}",
-                    stated=quoted(fault.stated) if fault.stated is not None else "", accepted=fault.accepted, nearest=fault.nearest,
-                )  # fmt: skip
+                    fault.problem,
+                    file=name,
+                    line=_line(text, index),
+                    field=f"{entry.get('key', f'rule {index + 1}')}.{fault.field}",
+                    stated=quoted(fault.stated) if fault.stated is not None else "",
+                    accepted=fault.accepted,
+                    nearest=fault.nearest,
+                )
             )
     if complaints:
         raise CatalogueError(complaints)
@@ -147,7 +169,9 @@ def _line(text: str, index: int) -> int:
 
 
 class _RuleFault(Exception):  # noqa: N818
-    def __init__(self, field: str, problem: str, *, stated: object = None, accepted: str = "", nearest: str = "") -> None:
+    def __init__(
+        self, field: str, problem: str, *, stated: object = None, accepted: str = "", nearest: str = ""
+    ) -> None:
         super().__init__(problem)
         self.field, self.problem, self.stated, self.accepted, self.nearest = field, problem, stated, accepted, nearest
 
@@ -159,19 +183,25 @@ def _nearest(word: object, words: Iterable[str]) -> str:
 
 def _one_of(field: str, word: object, words: Sequence[str]) -> str:
     if not isinstance(word, str) or word not in words:
-        raise _RuleFault(field, "not a word known here", stated=word, accepted=", ".join(words), nearest=_nearest(word, words))
+        raise _RuleFault(
+            field, "not a word known here", stated=word, accepted=", ".join(words), nearest=_nearest(word, words)
+        )
     return word
 
 
 def _rule(entry: dict[str, Any], family: str) -> Rule:
     for field in entry:
         if field not in TAKEN:
-            raise _RuleFault(field, "no such field in a rule", accepted=", ".join(TAKEN), nearest=_nearest(field, TAKEN))
+            raise _RuleFault(
+                field, "no such field in a rule", accepted=", ".join(TAKEN), nearest=_nearest(field, TAKEN)
+            )
     for field in NEEDED:
         if field not in entry:
             raise _RuleFault(field, "this field is needed and is not stated")
     key = entry["key"]
-    if not re.fullmatch(r"[a-z0-9]+(-[a-z0-9]+)+", key) or any(fnmatch.fnmatch(key, pattern) for pattern in FORBIDDEN_NAMES):
+    if not re.fullmatch(r"[a-z0-9]+(-[a-z0-9]+)+", key) or any(
+        fnmatch.fnmatch(key, pattern) for pattern in FORBIDDEN_NAMES
+    ):
         raise _RuleFault("key", "a key names the condition found, in lower case with hyphens", stated=key)
     each = _one_of("each", entry["each"], EACH)
     rule = Rule(
@@ -196,14 +226,18 @@ def _refuse_unknown_names(rule: Rule) -> None:
     for lever in rule.measures:
         if not is_lever(lever):
             raise _RuleFault("measures", "no such field in an assessment file", stated=lever)
+    _refuse_unknown_placeholders(rule)
+    for example in rule.examples:
+        for name in example.given:
+            _reachable("example", name, rule.each)
+
+
+def _refuse_unknown_placeholders(rule: Rule) -> None:
     for placeholder in PLACEHOLDER.findall(rule.says):
         if placeholder.startswith("policy."):
             _policy_unit("says", placeholder)
         else:
             _reachable("says", placeholder, rule.each)
-    for example in rule.examples:
-        for name in example.given:
-            _reachable("example", name, rule.each)
 
 
 def _reachable(field: str, key: object, each: str) -> Declaration:
@@ -223,7 +257,9 @@ def _conditions(field: str, entries: Any, each: str) -> tuple[Condition, ...]:
     for entry in entries:
         if isinstance(entry, dict):
             if set(entry) != {"any"} or not isinstance(entry["any"], list):
-                raise _RuleFault(field, "not a condition", stated=entry, accepted="[fact, word, value] or { any = [...] }")
+                raise _RuleFault(
+                    field, "not a condition", stated=entry, accepted="[fact, word, value] or { any = [...] }"
+                )
             found.append(Alternatives(tuple(_comparison(field, line, each) for line in entry["any"])))
         else:
             found.append(_comparison(field, entry, each))
@@ -283,7 +319,12 @@ def _policy_unit(field: str, name: str) -> str:
         return setting.kind
     if isinstance(setting, (int, float)) and not isinstance(setting, bool):
         return "ratio"
-    raise _RuleFault(field, "no such number in the policy", stated=name, nearest=_nearest(name.removeprefix("policy."), Policy.model_fields))
+    raise _RuleFault(
+        field,
+        "no such number in the policy",
+        stated=name,
+        nearest=_nearest(name.removeprefix("policy."), Policy.model_fields),
+    )
 
 
 def _example(entry: dict[str, Any]) -> Example:

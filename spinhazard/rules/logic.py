@@ -15,7 +15,7 @@ NO, UNKNOWN, YES = 0, 1, 2
 _RELATIVE_WIDTH_OF_A_LIMIT = 1e-12  # a value computed to be at the limit is at it, not beyond it by a rounding error
 
 
-def certain(holds: bool) -> Truth:
+def certain(*, holds: bool) -> Truth:
     """A truth that is the same in every draw.
 
     Parameters

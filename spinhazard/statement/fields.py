@@ -20,7 +20,9 @@ LONGEST_NOTE = 500
 class Fault(ValueError):  # noqa: N818  (reads as what happened)
     """A statement that cannot hold; `field` is the path below the model that found it."""
 
-    def __init__(self, problem: str, *, field: str = "", stated: object = None, accepted: str = "", nearest: str = "") -> None:
+    def __init__(
+        self, problem: str, *, field: str = "", stated: object = None, accepted: str = "", nearest: str = ""
+    ) -> None:
         super().__init__(problem)
         self.problem = problem
         self.field = field
@@ -77,7 +79,10 @@ def _identifier(value: str) -> str:
 Text = Annotated[str, StringConstraints(strict=True, max_length=LONGEST_NOTE), AfterValidator(plain_text)]
 Name = Annotated[str, StringConstraints(strict=True, min_length=1, max_length=120), AfterValidator(plain_text)]
 Identifier = Annotated[
-    str, StringConstraints(strict=True, min_length=1, max_length=60), AfterValidator(plain_text), AfterValidator(_identifier)
+    str,
+    StringConstraints(strict=True, min_length=1, max_length=60),
+    AfterValidator(plain_text),
+    AfterValidator(_identifier),
 ]
 
 
@@ -144,12 +149,19 @@ def _refuse_below(stated: Stated, above: float | None, at_least: float | None) -
 def _with_origin(stated: Stated, table: dict[str, Any]) -> Stated:
     for key in table:
         if key not in VALUE_TABLE:
-            raise Fault(f'unknown field "{key}"', field=str(key), accepted=", ".join(VALUE_TABLE), nearest=_nearest(key, VALUE_TABLE))
+            raise Fault(
+                f'unknown field "{key}"',
+                field=str(key),
+                accepted=", ".join(VALUE_TABLE),
+                nearest=_nearest(key, VALUE_TABLE),
+            )
     texts: dict[str, str] = {}
     for key in ("source", "note", "instrument"):
         value = table.get(key, "")
         if not isinstance(value, str) or len(value) > LONGEST_NOTE:
-            raise Fault("not a short text", field=key, stated=value, accepted=f"text of at most {LONGEST_NOTE} characters")
+            raise Fault(
+                "not a short text", field=key, stated=value, accepted=f"text of at most {LONGEST_NOTE} characters"
+            )
         texts[key] = plain_text(value)
     words = tuple(SOURCE_WORDS)
     if "source" in table and texts["source"].lower() not in SOURCE_WORDS:

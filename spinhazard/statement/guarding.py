@@ -7,7 +7,15 @@ from typing import Annotated, Literal, Self
 from pydantic import AfterValidator, Field, model_validator
 
 from spinhazard.statement.fields import (
-    Angle, Fault, Identifier, Length, LengthOrZero, Model, Name, Stress, TimeOrZero,
+    Angle,
+    Fault,
+    Identifier,
+    Length,
+    LengthOrZero,
+    Model,
+    Name,
+    Stress,
+    TimeOrZero,
 )  # fmt: skip
 from spinhazard.statement.materials import known_material
 
@@ -30,10 +38,14 @@ class Guard(Model):
     covers: tuple[Identifier, ...] = Field(min_length=1, max_length=100, description="shafts behind this guard")
     kind: GuardKind = Field(description="kind of guard")
     distance: LengthOrZero | None = Field(None, description="from guard plane to the nearest moving part")
-    intrusion: LengthOrZero | None = Field(None, description="how far a hand may be past the guard plane before it acts")
+    intrusion: LengthOrZero | None = Field(
+        None, description="how far a hand may be past the guard plane before it acts"
+    )
     fastening: Literal["tool", "hand", "none"] | None = Field(None, description="what it takes to open a fixed guard")
     opening_time: TimeOrZero | None = Field(None, description="time to unfasten and open it")
-    lock_release: Literal["none", "timer", "standstill sensor"] | None = Field(None, description="what releases the guard lock")
+    lock_release: Literal["none", "timer", "standstill sensor"] | None = Field(
+        None, description="what releases the guard lock"
+    )
     lock_timer: TimeOrZero | None = Field(None, description="time after which the lock is released")
     response_time: TimeOrZero | None = Field(None, description="from opening or interrupting to the stop command")
     resolution: Length | None = Field(None, description="smallest object a light curtain detects")

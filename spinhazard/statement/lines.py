@@ -16,7 +16,9 @@ _HEADER = re.compile(rf"\s*\[\s*({_DOTTED})\s*\]")
 _ASSIGNMENT = re.compile(rf"\s*({_DOTTED})\s*=")
 _INNER_KEY = re.compile(rf"[{{,]\s*({_DOTTED})\s*=")
 _ONE_KEY = re.compile(_KEY)
-_STRINGS = re.compile(r'"""(?:[^"\\]|\\.|"(?!""))*(?:"""|\Z)|\'\'\'.*?(?:\'\'\'|\Z)|"(?:[^"\\\n]|\\.)*"|\'[^\'\n]*\'|#[^\n]*', re.DOTALL)
+_STRINGS = re.compile(
+    r'"""(?:[^"\\]|\\.|"(?!""))*(?:"""|\Z)|\'\'\'.*?(?:\'\'\'|\Z)|"(?:[^"\\\n]|\\.)*"|\'[^\'\n]*\'|#[^\n]*', re.DOTALL
+)
 
 
 def _keys(dotted: str) -> list[str]:

@@ -25,5 +25,10 @@ class Lockout(Model):
     @model_validator(mode="after")
     def _none_stands_alone(self) -> Self:
         if self.back_drive and "none" in self.back_drive and len(self.back_drive) > 1:
-            raise Fault("names none beside something", field="back_drive", stated=list(self.back_drive), accepted='["none"] alone, or what there is')
+            raise Fault(
+                "names none beside something",
+                field="back_drive",
+                stated=list(self.back_drive),
+                accepted='["none"] alone, or what there is',
+            )
         return self

@@ -6,14 +6,16 @@ from typing import Literal
 
 from pydantic import Field
 
-from spinhazard.statement.fields import Day, Force, Identifier, Model, Name, Text
+from spinhazard.statement.fields import Day, Force, Identifier, Model, Text
 from spinhazard.statement.guarding import Guard
 from spinhazard.statement.lockout import Lockout
 from spinhazard.statement.rotor import Shaft
 from spinhazard.statement.stopping import Stopping
 
 MachineKind = Literal["fan", "grinder", "saw", "press", "centrifuge", "lathe", "mixer", "roll", "flywheel", "other"]
-Trigger = Literal["speed", "drive", "rotor", "brake", "guard", "procedure", "bearing", "repair", "relocation", "accident"]
+Trigger = Literal[
+    "speed", "drive", "rotor", "brake", "guard", "procedure", "bearing", "repair", "relocation", "accident"
+]
 
 
 class Machine(Model):

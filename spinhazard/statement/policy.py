@@ -9,7 +9,16 @@ from pydantic import Field
 from spinhazard.quantity.notation import parse_stated
 from spinhazard.quantity.stated import Stated
 from spinhazard.statement.fields import (
-    Density, Energy, LineSpeed, Model, Ratio, RatioOrZero, SpecificHeat, TemperatureDifference, Text, Time,
+    Density,
+    Energy,
+    LineSpeed,
+    Model,
+    Ratio,
+    RatioOrZero,
+    SpecificHeat,
+    TemperatureDifference,
+    Text,
+    Time,
 )  # fmt: skip
 from spinhazard.statement.stopping import STOP_CASES, StopCase
 
@@ -108,7 +117,9 @@ def _settings(model: Model, prefix: str) -> list[tuple[str, str]]:
     found: list[tuple[str, str]] = []
     for name in type(model).model_fields:
         value = getattr(model, name)
-        found += _settings(value, f"{prefix}{name}.") if isinstance(value, Model) else [(prefix + name, _as_text(value))]
+        found += (
+            _settings(value, f"{prefix}{name}.") if isinstance(value, Model) else [(prefix + name, _as_text(value))]
+        )
     return found
 
 
@@ -118,7 +129,9 @@ def _differences(shipped: Model, ours: Model, prefix: str) -> list[tuple[str, st
         before, after = getattr(shipped, name), getattr(ours, name)
         if isinstance(after, Model):
             found += _differences(before, after, f"{prefix}{name}.")
-        elif (before.value, before.kind) != (after.value, after.kind) if _both_stated(before, after) else before != after:
+        elif (
+            (before.value, before.kind) != (after.value, after.kind) if _both_stated(before, after) else before != after
+        ):
             found.append((prefix + name, _as_text(before), _as_text(after)))
     return found
 

@@ -151,10 +151,17 @@ def parse_toml(text: str, *, name: str) -> dict[str, Any]:
         line = int(found[1]) if found else text.count("\n") + 1
         reason = re.sub(r"\s*\(at .*\)\Z", "", str(error))
         raise InputError(
-            Complaint(f"not readable as TOML ({reason[0].lower()}{reason[1:]})", file=name, line=line, accepted='lines such as: speed = "1480 rpm"')
+            Complaint(
+                f"not readable as TOML ({reason[0].lower()}{reason[1:]})",
+                file=name,
+                line=line,
+                accepted='lines such as: speed = "1480 rpm"',
+            )
         ) from None
     except (RecursionError, ValueError):
-        raise InputError(Complaint("not readable as TOML (nested too deeply, or a number too long)", file=name)) from None
+        raise InputError(
+            Complaint("not readable as TOML (nested too deeply, or a number too long)", file=name)
+        ) from None
 
 
 def _check_format(raw: dict[str, Any], text: str, name: str, what: str) -> None:
@@ -164,7 +171,14 @@ def _check_format(raw: dict[str, Any], text: str, name: str, what: str) -> None:
     line = line_numbers(text).get(("format",), 1)
     problem = "the format number is missing" if stated is None else "this format number is not known to this program"
     raise InputError(
-        Complaint(problem, file=name, line=line, field="format", stated="" if stated is None else quoted(stated), accepted=f"format = 1 at the top of {what}")
+        Complaint(
+            problem,
+            file=name,
+            line=line,
+            field="format",
+            stated="" if stated is None else quoted(stated),
+            accepted=f"format = 1 at the top of {what}",
+        )
     )
 
 
@@ -226,7 +240,9 @@ def _complaint(fault: Fault, path: KeyPath, raw: Any, line: int, name: str) -> C
     )  # fmt: skip
 
 
-def _walk(location: tuple[int | str, ...], model: type[BaseModel], raw: Any) -> tuple[KeyPath, FieldInfo | None, type[BaseModel] | None]:
+def _walk(
+    location: tuple[int | str, ...], model: type[BaseModel], raw: Any
+) -> tuple[KeyPath, FieldInfo | None, type[BaseModel] | None]:
     """The path in the file of a location in the models (which also holds the shapes), its field, the field's model."""
     path: KeyPath = ()
     owner: type[BaseModel] | None = model
@@ -318,8 +334,16 @@ def _wrong_word(kind: str, context: dict[str, Any], stated: Any) -> Fault:
     else:
         words = [word.strip("'") for word in re.split(r", | or ", str(context.get("expected", "")))]
         field = ""
-    near = difflib.get_close_matches(str(stated)[:80].lower(), words, n=1, cutoff=0.4) if isinstance(stated, str) else []
-    return Fault("not a word known here", field=field, stated=stated, accepted=", ".join(words), nearest=f'"{near[0]}"' if near else "")
+    near = (
+        difflib.get_close_matches(str(stated)[:80].lower(), words, n=1, cutoff=0.4) if isinstance(stated, str) else []
+    )
+    return Fault(
+        "not a word known here",
+        field=field,
+        stated=stated,
+        accepted=", ".join(words),
+        nearest=f'"{near[0]}"' if near else "",
+    )
 
 
 def readable_path(path: KeyPath, raw: Any) -> str:

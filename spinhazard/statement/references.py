@@ -59,7 +59,10 @@ def _twice(path: Path, entries: list[tuple[int, dict[str, Any]]]) -> Found:
         name = entry.get("id")
         if isinstance(name, str):
             if name in seen:
-                yield (*path, index, "id"), Fault("this id is used twice", stated=name, accepted="a name of its own for each")
+                yield (
+                    (*path, index, "id"),
+                    Fault("this id is used twice", stated=name, accepted="a name of its own for each"),
+                )
             seen.add(name)
 
 

@@ -8,8 +8,23 @@ from pydantic import AfterValidator, Field, model_validator
 
 from spinhazard.quantity.stated import Stated
 from spinhazard.statement.fields import (
-    Angle, AngularSpeed, Density, Fault, Gd2, Identifier, Inertia, Length, LengthOrZero, Mass, Model, Name, Ratio, Stress,
-    Unbalance, Wk2, finite,
+    Angle,
+    AngularSpeed,
+    Density,
+    Fault,
+    Gd2,
+    Identifier,
+    Inertia,
+    Length,
+    LengthOrZero,
+    Mass,
+    Model,
+    Name,
+    Ratio,
+    Stress,
+    Unbalance,
+    Wk2,
+    finite,
 )  # fmt: skip
 from spinhazard.statement.materials import known_material
 
@@ -34,7 +49,9 @@ class PartBase(Model):
 
     id: Identifier = Field(description="name of the part on this shaft")
     count: int = Field(1, strict=True, ge=1, le=10_000, description="number of identical pieces, evenly spaced")
-    offset: LengthOrZero | None = Field(None, description="distance of the piece's own centre of mass from the shaft axis")
+    offset: LengthOrZero | None = Field(
+        None, description="distance of the piece's own centre of mass from the shaft axis"
+    )
     mass: Mass | None = Field(None, description="mass of one piece")
     density: Density | None = Field(None, description="density of the piece's material")
     material: Material | None = Field(None, description="material, by its name in the table")
@@ -175,7 +192,9 @@ class Profile(PartBase):
                     accepted="pairs [r, z] with r of at least 0",
                 )  # fmt: skip
         if self.offset is not None and self.offset.value > 0.0:
-            raise Fault("a profile turns about the shaft itself", field="offset", stated=self.offset.text, accepted="no offset")
+            raise Fault(
+                "a profile turns about the shaft itself", field="offset", stated=self.offset.text, accepted="no offset"
+            )
         return self
 
 
@@ -226,14 +245,18 @@ class Shaft(Model):
     drive: Literal["fixed speed", "inverter", "pole change", "belt", "turbine", "hydraulic", "process"] | None = Field(
         None, description="what sets the speed"
     )
-    unbalance: Unbalance | None = Field(None, description="static unbalance: mass times distance of its centre from the axis")
+    unbalance: Unbalance | None = Field(
+        None, description="static unbalance: mass times distance of its centre from the axis"
+    )
     parts: tuple[Part, ...] = Field(alias="part", min_length=1, max_length=500, description="parts on this shaft")
 
     @model_validator(mode="after")
     def _coupling_is_whole(self) -> Self:
         if (self.driven_by is None) != (self.ratio is None):
             missing, there = ("ratio", "driven_by") if self.ratio is None else ("driven_by", "ratio")
-            raise Fault(f"{there} is stated without {missing}", field=missing, accepted="both driven_by and ratio, or neither")
+            raise Fault(
+                f"{there} is stated without {missing}", field=missing, accepted="both driven_by and ratio, or neither"
+            )
         if self.max_speed is not None and self.speed is not None and self.max_speed.value < self.speed.low:
             raise Fault(
                 f"below the running speed ({self.speed.text})", field="max_speed", stated=self.max_speed.text,

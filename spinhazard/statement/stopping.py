@@ -7,8 +7,24 @@ from typing import Literal, Self
 from pydantic import Field, model_validator
 
 from spinhazard.statement.fields import (
-    AngularSpeed, AngularSpeedOrZero, Day, Energy, Fault, Identifier, Mass, Model, Power, SpecificHeat, TemperatureDifference,
-    Text, Time, TimeOrZero, Torque, TorqueOrZero, ViscousDrag, Windage,
+    AngularSpeed,
+    AngularSpeedOrZero,
+    Day,
+    Energy,
+    Fault,
+    Identifier,
+    Mass,
+    Model,
+    Power,
+    SpecificHeat,
+    TemperatureDifference,
+    Text,
+    Time,
+    TimeOrZero,
+    Torque,
+    TorqueOrZero,
+    ViscousDrag,
+    Windage,
 )  # fmt: skip
 
 StopCase = Literal["normal stop", "power loss", "brake failed"]
@@ -33,7 +49,9 @@ class Brake(Model):
     heat_capacity_mass: Mass | None = Field(None, description="mass of drum or disc that takes up the heat")
     specific_heat: SpecificHeat | None = Field(None, description="specific heat of drum or disc")
     energy_rating: Energy | None = Field(None, description="largest energy for one stop")
-    max_temperature_rise: TemperatureDifference | None = Field(None, description="largest temperature rise of drum or disc")
+    max_temperature_rise: TemperatureDifference | None = Field(
+        None, description="largest temperature rise of drum or disc"
+    )
 
 
 class Stopping(Model):
@@ -42,13 +60,21 @@ class Stopping(Model):
     shaft: Identifier = Field(description="shaft that the torques below are referred to")
     friction_torque: TorqueOrZero | None = Field(None, description="constant part of the drag torque")
     viscous: ViscousDrag | None = Field(None, description="part of the drag torque that grows with speed, per rad/s")
-    windage: Windage | None = Field(None, description="part of the drag torque that grows with speed squared, per (rad/s)²")
+    windage: Windage | None = Field(
+        None, description="part of the drag torque that grows with speed squared, per (rad/s)²"
+    )
     loss_power: tuple[LossPower, ...] = Field((), max_length=20, description="power lost at a known speed")
-    measured_times: tuple[Time, ...] = Field((), max_length=1000, description="measured stops, each from command to standstill")
-    measured_case: StopCase | Literal["coast"] | None = Field(None, description="stop case the measured stops belong to")
+    measured_times: tuple[Time, ...] = Field(
+        (), max_length=1000, description="measured stops, each from command to standstill"
+    )
+    measured_case: StopCase | Literal["coast"] | None = Field(
+        None, description="stop case the measured stops belong to"
+    )
     measured_on: Day | None = Field(None, description="day of the measured stops")
     conditions: Text = Field("", description="what was tried: warm, dampers closed, heaviest tool, no load …")
-    standstill_speed: AngularSpeedOrZero | None = Field(None, description="speed below which the shaft counts as stopped")
+    standstill_speed: AngularSpeedOrZero | None = Field(
+        None, description="speed below which the shaft counts as stopped"
+    )
     control_delay: TimeOrZero | None = Field(None, description="time the drive keeps driving after the stop command")
     brakes: tuple[Brake, ...] = Field((), alias="brake", max_length=20, description="brakes")
 
@@ -57,5 +83,7 @@ class Stopping(Model):
         names = [brake.id for brake in self.brakes]
         for name in names:
             if names.count(name) > 1:
-                raise Fault("two brakes have the same id", field="brake", stated=name, accepted="a name of its own for each")
+                raise Fault(
+                    "two brakes have the same id", field="brake", stated=name, accepted="a name of its own for each"
+                )
         return self

@@ -102,7 +102,14 @@ def test_wrong_dimension_says_what_the_field_takes():
 
 def test_hostile_text_is_refused_in_microseconds():
     parse_stated("1 kg", "mass")  # the registry of units is made once
-    for text in ("9**9**9 kg", "(" * 100, "9" * 100_000, "1" + "e9" * 40 + " kg", "__import__('os').system('x')", "1 kg ± " + "1" * 80):
+    for text in (
+        "9**9**9 kg",
+        "(" * 100,
+        "9" * 100_000,
+        "1" + "e9" * 40 + " kg",
+        "__import__('os').system('x')",
+        "1 kg ± " + "1" * 80,
+    ):
         started = time.perf_counter()
         for _ in range(100):
             with pytest.raises(NotationError, match="."):
