@@ -12,6 +12,8 @@ from typing import Any
 import numpy as np
 
 from spinhazard.facts import FACTS
+from spinhazard.errors import InputError
+from spinhazard.facts.consistency import contradictions
 from spinhazard.facts.fact import Fact
 from spinhazard.facts.sheet import FactSheet
 from spinhazard.mechanics.formula import printed
@@ -22,7 +24,7 @@ from spinhazard.rules.rule import NEEDS_ATTENTION
 from spinhazard.sampling import Sampler, interval
 from spinhazard.statement.machine import AssessmentFile
 from spinhazard.statement.policy import Policy
-from spinhazard.statement.reading import Reading
+from spinhazard.statement.reading import Reading, complaint_about
 
 
 @dataclass(frozen=True)
@@ -141,7 +143,12 @@ def assess(
     -------
     Assessment
         The frozen result.
-    """
+
+    Raises
+    ------
+    InputError
+        Stated values contradict each other.
+    """  # noqa: DOC502  (raised by what is called)
     policy = policy or Policy()
     catalogue = catalogue or shipped_catalogue()
     digests = {
@@ -153,6 +160,7 @@ def assess(
     sheet = FactSheet(reading.file, policy, Sampler(digests["inputs"], draws, policy.spreads))
     # NaN stands for a missing value and infinity for a stop that never ends; both are meant
     with np.errstate(invalid="ignore", divide="ignore", over="ignore"):
+        _refuse_contradictions(reading, sheet)
         found = tuple(findings(catalogue.rules, sheet, system=system))
         facts = tuple(_all_facts(sheet))
     return Assessment(
@@ -165,6 +173,12 @@ def assess(
         draws=draws,
         program=program_name(),
     )
+
+
+def _refuse_contradictions(reading: Reading, sheet: FactSheet) -> None:
+    found = contradictions(sheet)
+    if found:
+        raise InputError([complaint_about(reading, f"{part.path}.{field}", fault) for part, field, fault in found])
 
 
 def _all_facts(sheet: FactSheet) -> list[Fact]:

@@ -7,7 +7,7 @@ import numpy as np
 from spinhazard.facts.drag import NONE
 from spinhazard.facts.fact import fact
 from spinhazard.facts.sheet import FactSheet
-from spinhazard.facts.stopping import brakes_of, stop_stages, total_of
+from spinhazard.facts.stopping import brakes_of, build_up_of, stop_stages, total_of
 from spinhazard.facts.subject import Subject
 from spinhazard.mechanics import braking
 from spinhazard.sampling import Samples, largest, smallest
@@ -24,7 +24,7 @@ def _worked_out(sheet: FactSheet, case: str) -> dict[str, Samples]:
     for brake in brakes_of(sheet, case):
         path = f"stopping.brake.{brake.id}"
         torque = sheet.draw(f"{path}.torque", brake.torque)
-        build_up = NONE if brake.build_up is None else sheet.draw(f"{path}.build_up", brake.build_up)
+        build_up = build_up_of(sheet, brake)
         began: Samples = NONE
         angle: Samples = NONE
         for stage in stages[1:]:

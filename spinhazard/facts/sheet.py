@@ -256,6 +256,21 @@ class FactSheet:
             self.stated[path] = stated
         return drawn
 
+    def relative_spread(self, stated: Stated) -> float:
+        """Half-width of the spread used for a value, over the value.
+
+        Parameters
+        ----------
+        stated : Stated
+            A value other than zero.
+
+        Returns
+        -------
+        float
+            Share.
+        """
+        return self._sampler.half_width(stated) / abs(stated.value)
+
     def word(self, subject: Subject, field: str) -> Word | None:
         """A stated word, yes or no, or day; None where it is not stated, which is then recorded.
 

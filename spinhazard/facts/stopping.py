@@ -60,7 +60,7 @@ def _delay(sheet: FactSheet, case: str) -> Samples:
     if case in {"power loss", "coast"} or sheet.file.stopping is None:
         return NONE
     if sheet.file.stopping.control_delay is None:
-        return sheet.missing("stopping.control_delay")
+        return sheet.policy("default_control_delay")
     return stated_or_zero(sheet, "control_delay")
 
 
@@ -102,12 +102,49 @@ def _brake_steps(sheet: FactSheet, case: str) -> list[tuple[Samples, Samples]]:
     for brake in brakes_of(sheet, case):
         path = f"stopping.brake.{brake.id}"
         torques.append(sheet.draw(f"{path}.torque", brake.torque))
-        times.append(NONE if brake.build_up is None else sheet.draw(f"{path}.build_up", brake.build_up))
+        times.append(build_up_of(sheet, brake))
     if len(times) < 2:
         return list(zip(times, torques, strict=True))
     all_times, all_torques = (np.array(np.broadcast_arrays(*arrays)) for arrays in (times, torques))
     order = np.argsort(all_times, axis=0, kind="stable")
     return list(zip(np.take_along_axis(all_times, order, 0), np.take_along_axis(all_torques, order, 0), strict=True))
+
+
+def build_up_of(sheet: FactSheet, brake: Brake) -> Samples:
+    """Time until a brake's torque is there: as stated, or the policy's default.
+
+    Parameters
+    ----------
+    sheet : FactSheet
+        The sheet.
+    brake : Brake
+        The brake.
+
+    Returns
+    -------
+    ndarray
+        Time [s].
+    """
+    if brake.build_up is None:
+        return sheet.policy("default_build_up")
+    return sheet.draw(f"stopping.brake.{brake.id}.build_up", brake.build_up)
+
+
+@fact(per="machine", word=True)
+def control_delay_is_stated(sheet: FactSheet, _machine: Subject) -> Word | None:
+    """Whether it is stated how long the drive keeps driving after the stop command."""
+    if sheet.file.stopping is None:
+        return None
+    return sheet.file.stopping.control_delay is not None
+
+
+@fact(per="machine", word=True)
+def brake_data_are_whole(sheet: FactSheet, _machine: Subject) -> Word | None:
+    """Whether build-up time and behaviour without supply are stated for every brake."""
+    stopping = sheet.file.stopping
+    if stopping is None or not stopping.brakes:
+        return None
+    return all(brake.build_up is not None and brake.works_without_power is not None for brake in stopping.brakes)
 
 
 def _coast(sheet: FactSheet, torque: Samples, start: Samples, *, duration: Samples | None) -> Stage:

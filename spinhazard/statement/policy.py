@@ -19,6 +19,7 @@ from spinhazard.statement.fields import (
     TemperatureDifference,
     Text,
     Time,
+    TimeOrZero,
 )  # fmt: skip
 from spinhazard.statement.stopping import STOP_CASES, StopCase
 
@@ -65,6 +66,8 @@ class Policy(Model):
     draws: Annotated[int, Field(ge=100, le=1_000_000)] = 4096
     figures: Literal["iso", "us"] = "iso"
     credible_stops: tuple[StopCase, ...] = Field(STOP_CASES, min_length=1)
+    default_control_delay: TimeOrZero = _default("0 s", "time")
+    default_build_up: TimeOrZero = _default("0 s", "time")
     wait_margin: Ratio = _default(1.2, "ratio")
     energy_review_level: Energy = _default("1 kJ", "energy")
     energy_at_access_level: Energy = _default("10 J", "energy")

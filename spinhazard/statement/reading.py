@@ -224,7 +224,7 @@ def _complaints(error: ValidationError, model: type[BaseModel], raw: Any, text: 
             path = (*path, *fault.field.split("."))
         complaint = _complaint(fault, path, raw, nearest_line(lines, path), name)
         if info is not None and info.description and item["type"] == "value_error" and not fault.field:
-            meaning = f"{info.description} is {complaint.accepted}" if complaint.accepted else info.description
+            meaning = f"{info.description}, as {complaint.accepted}" if complaint.accepted else info.description
             complaint = Complaint(
                 complaint.problem, file=name, line=complaint.line, field=complaint.field, stated=complaint.stated,
                 accepted=meaning, nearest=complaint.nearest,
@@ -238,6 +238,30 @@ def _complaint(fault: Fault, path: KeyPath, raw: Any, line: int, name: str) -> C
         fault.problem, file=name, line=line, field=readable_path(path, raw),
         stated="" if fault.stated is None else quoted(fault.stated), accepted=fault.accepted, nearest=fault.nearest,
     )  # fmt: skip
+
+
+def complaint_about(reading: Reading, path: str, fault: Fault) -> Complaint:
+    """A complaint found after reading, with the line its field stands in.
+
+    Parameters
+    ----------
+    reading : Reading
+        The file.
+    path : str
+        Readable path of the field, ids in place of indexes.
+    fault : Fault
+        What is wrong.
+
+    Returns
+    -------
+    Complaint
+        For an InputError.
+    """
+    raw = parse_toml(reading.text, name=reading.name)
+    number_parts(raw)
+    lines = line_numbers(reading.text)
+    keys = next((keys for keys in lines if readable_path(keys, raw) == path), ())
+    return _complaint(fault, keys, raw, lines[keys], reading.name)
 
 
 def _walk(
