@@ -11,8 +11,8 @@ from typing import Any
 
 import numpy as np
 
-from spinhazard.facts import FACTS
 from spinhazard.errors import InputError
+from spinhazard.facts import FACTS
 from spinhazard.facts.consistency import contradictions
 from spinhazard.facts.fact import Fact
 from spinhazard.facts.sheet import FactSheet

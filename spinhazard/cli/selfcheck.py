@@ -52,7 +52,7 @@ def run(*, all_values: bool) -> None:
         raise SystemExit(1)
     say(
         *wrapped(
-            "Every value lies within its stated tolerance. This is evidence for the validation of software; it is no statement about a machine."
+            "Every value lies within its stated tolerance. This is evidence for the validation of software, no statement about a machine."
         )
     )
 

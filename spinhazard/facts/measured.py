@@ -9,7 +9,7 @@ from spinhazard.facts.fact import Word, fact
 from spinhazard.facts.sheet import FactSheet
 from spinhazard.facts.stopping import computed_time
 from spinhazard.facts.subject import Subject
-from spinhazard.sampling import Samples
+from spinhazard.sampling import Samples, largest
 
 ENOUGH_FOR_A_SPREAD = 5
 SECONDS_PER_DAY = 86400.0
@@ -33,7 +33,8 @@ def measured_stopping_time(sheet: FactSheet, _machine: Subject) -> Samples | Non
     longest: Samples = table.max(axis=0)
     if len(readings) < ENOUGH_FOR_A_SPREAD:
         return longest
-    return np.maximum(longest, table.mean(axis=0) + 3.0 * table.std(axis=0, ddof=1))
+    bound: Samples = table.mean(axis=0) + 3.0 * table.std(axis=0, ddof=1)
+    return largest([longest, bound])
 
 
 @fact(per="machine", symbol="n", equation="n = number of readings", source="practice")

@@ -138,7 +138,10 @@ def _refuse_below(stated: Stated, above: float | None, at_least: float | None) -
     # the lower end of a normal spread is only its k-fold; sampling keeps draws at the limit
     low = stated.low if stated.coverage_factor is None else stated.value
     accepted = f"{what} {'above' if above is not None else 'of at least'} {limit:g}"
-    outside = (lambda number: number <= limit) if above is not None else (lambda number: number < limit)
+
+    def outside(number: float) -> bool:
+        return number <= limit if above is not None else number < limit
+
     if outside(stated.value):
         problem = "zero cannot be meant" if stated.value == 0.0 else "a negative value cannot be meant"
         raise Fault(problem, stated=stated.text, accepted=accepted)
