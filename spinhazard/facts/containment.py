@@ -15,6 +15,10 @@ from spinhazard.sampling import Samples, smallest
 from spinhazard.statement.materials import materials
 
 ROUND = ("disk", "ring")
+WALLS = ("fixed", "hinged", "interlocked", "enclosure")
+"""Guards with a wall that a piece could hit; a light curtain, a two-hand control and a rail have none."""
+SOLID = ("fixed", "hinged", "interlocked", "enclosure")
+"""Kinds of guard with a wall that could hold something."""
 
 
 def _is_sector(part: Subject) -> bool:
@@ -133,31 +137,47 @@ def fragment_energy(sheet: FactSheet, guard: Subject) -> Samples | None:
     return None if threat is None else threat.energy
 
 
-@fact(per="guard", unit="m", symbol="D_f", equation="D_f = smaller face of the fragment", source="bc-top-9a")
+@fact(per="guard", unit="m", symbol="D_f", formulas=[fragments.equivalent_diameter])
 def fragment_face(sheet: FactSheet, guard: Subject) -> Samples | None:
-    """Diameter of the smallest face of the piece that can hit the guard: as stated, else the thinnest side of the part."""
+    """Diameter of the smallest face of the piece that can hit the guard: as stated, else of the part's smallest face."""
     threat = _threat(sheet, guard)
     if threat is None:
         return None
-    entity, path = threat.part.entity, threat.part.path
-    if entity.fragment.face is not None:
-        return sheet.draw(f"{path}.fragment.face", entity.fragment.face)
-    sides = {"disk": ("thickness",), "ring": ("width",), "plate": ("radial", "axial", "tangential"), "sphere": ("diameter",),
-             "torus": ("section_diameter",), "cone": ("length",)}.get(entity.shape, ())  # fmt: skip
-    if not sides or any(getattr(entity, side) is None for side in sides):
-        return sheet.missing(f"{path}.fragment.face")
-    return smallest([sheet.value(threat.part, side) for side in sides])
+    stated = threat.part.entity.fragment.face
+    if stated is not None:
+        return sheet.draw(f"{threat.part.path}.fragment.face", stated)
+    area = _smallest_face(sheet, threat.part)
+    if area is None:
+        return sheet.missing(f"{threat.part.path}.fragment.face")
+    return sheet.apply(fragments.equivalent_diameter, area)
+
+
+def _smallest_face(sheet: FactSheet, part: Subject) -> Samples | None:
+    """Area of the smallest face of a piece whose dimensions give one."""
+    shape = part.entity.shape
+    if shape == "plate" and part.entity.axial is not None:
+        radial, axial, tangential = (sheet.value(part, side) for side in ("radial", "axial", "tangential"))
+        return smallest([radial * axial, axial * tangential, radial * tangential])
+    if shape in ROUND:
+        thickness = "thickness" if shape == "disk" else "width"
+        if getattr(part.entity, thickness) is None:
+            return None
+        outer, inner = _radii(sheet, part)
+        return sheet.value(part, thickness) * (outer - inner)  # the radial cut, on which the piece flies edge first
+    return None
 
 
 @fact(per="guard", word=True)
 def guard_material(sheet: FactSheet, guard: Subject) -> Word | None:
     """Material of the guard."""
-    return sheet.word(guard, "material")
+    return sheet.word(guard, "material") if guard.entity.kind in WALLS else None
 
 
 @fact(per="guard", word=True)
 def perforation_method_applies(sheet: FactSheet, guard: Subject) -> Word | None:
     """Whether the perforation formulas, which are for steel plate, apply to the guard's material."""
+    if guard.entity.kind not in WALLS:
+        return None
     material = sheet.word(guard, "material")
     return materials()[material].steel if isinstance(material, str) else None
 
@@ -165,6 +185,8 @@ def perforation_method_applies(sheet: FactSheet, guard: Subject) -> Word | None:
 @fact(per="guard", unit="m", symbol="T", formulas=[fragments.perforation_thickness])
 def perforation_thickness(sheet: FactSheet, guard: Subject) -> Samples | None:
     """Thickness of steel plate that the most energetic piece would just perforate."""
+    if guard.entity.kind not in WALLS:
+        return None
     energy = sheet.where_applies("fragment_energy", guard)
     if energy is None:
         return None
@@ -184,6 +206,34 @@ def design_thickness(sheet: FactSheet, guard: Subject) -> Samples | None:
 
 
 @fact(per="guard", unit="m", symbol="T_g")
-def guard_thickness(sheet: FactSheet, guard: Subject) -> Samples:
+def guard_thickness(sheet: FactSheet, guard: Subject) -> Samples | None:
     """Thickness of the guard's wall."""
-    return sheet.value(guard, "thickness")
+    return sheet.value(guard, "thickness") if guard.entity.kind in WALLS else None
+
+
+@fact(per="guard", symbol="T/D_f", equation="T / D_f", source="bc-top-9a")
+def perforation_ratio(sheet: FactSheet, guard: Subject) -> Samples | None:
+    """Perforation thickness over the diameter of the piece's face."""
+    thickness, face = sheet.where_applies("perforation_thickness", guard), sheet.where_applies("fragment_face", guard)
+    return None if thickness is None or face is None else thickness / face
+
+
+@fact(per="guard", word=True)
+def guard_contains(sheet: FactSheet, guard: Subject) -> Word | None:
+    """Whether the guard is meant to hold what could come off."""
+    return sheet.word(guard, "contains") if guard.entity.kind in SOLID else False
+
+
+@fact(per="shaft", word=True)
+def is_contained(sheet: FactSheet, shaft: Subject) -> Word | None:
+    """Whether a guard of the shaft is meant to hold what could come off."""
+    solid = [
+        guard
+        for guard in sheet.subjects.guards
+        if shaft.entity.id in guard.entity.covers and guard.entity.kind in SOLID
+    ]
+    if any(guard.entity.contains for guard in solid):
+        return True
+    for guard in solid:
+        sheet.word(guard, "contains")
+    return None if any(guard.entity.contains is None for guard in solid) else False

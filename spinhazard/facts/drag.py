@@ -7,7 +7,7 @@ import numpy as np
 from spinhazard.facts.fact import Word, fact
 from spinhazard.facts.sheet import NOT_KNOWN, FactSheet
 from spinhazard.facts.subject import Subject
-from spinhazard.mechanics import drag
+from spinhazard.mechanics import drag, energy
 from spinhazard.mechanics import inertia as moments
 from spinhazard.quantity.stated import Stated
 from spinhazard.sampling import Samples
@@ -42,6 +42,14 @@ def drivetrain(sheet: FactSheet, shaft: Subject) -> dict[str, Samples]:
                 ratios[other.entity.id] = ratios[here.id] * sheet.value(other, "ratio")
                 waiting.append(other.entity)
     return ratios
+
+
+@fact(per="shaft", word=True)
+def is_coupled(sheet: FactSheet, shaft: Subject) -> Word | None:
+    """Whether the shaft is rigidly coupled to another one."""
+    return shaft.entity.driven_by is not None or any(
+        other.entity.driven_by == shaft.entity.id for other in sheet.subjects.shafts
+    )
 
 
 def _stopping_shaft(sheet: FactSheet) -> Subject | None:
@@ -205,6 +213,22 @@ def drag_is_estimated(sheet: FactSheet, _machine: Subject) -> Word | None:
 def standstill_speed(sheet: FactSheet, _machine: Subject) -> Samples:
     """Speed below which the shaft counts as stopped; zero where none is stated."""
     return stated_or_zero(sheet, "standstill_speed")
+
+
+@fact(
+    per="machine", unit="m/s", symbol="v₁", equation="v₁ = max(ω₁ i R) over the drivetrain", source="openstax-up1 §10.3",
+)  # fmt: skip
+def standstill_tip_speed(sheet: FactSheet, _machine: Subject) -> Samples | None:
+    """Speed of the drivetrain's fastest point at the standstill speed."""
+    reference = _stopping_shaft(sheet) if sheet.file.stopping is not None else None
+    if reference is None or sheet.file.stopping is None or sheet.file.stopping.standstill_speed is None:
+        return None
+    speeds: Samples = NONE
+    for name, ratio in drivetrain(sheet, reference).items():
+        for part in sheet.subjects.parts_of(sheet.subjects.shaft(name)):
+            speed = sheet("standstill_speed") * ratio
+            speeds = np.maximum(speeds, sheet.apply(energy.tip_speed, speed, sheet("tip_radius", part)))
+    return speeds
 
 
 @fact(per="machine", word=True)

@@ -65,6 +65,20 @@ def procedure_age(sheet: FactSheet, lockout: Subject) -> Samples:
     return np.array([(assessed - reviewed).days * SECONDS_PER_DAY])
 
 
+@fact(per="lockout", word=True)
+def procedure_before_change(sheet: FactSheet, lockout: Subject) -> Word | None:
+    """Whether the procedure was last reviewed before the last change of rotor, drive, brake or speed."""
+    changed = sheet.file.assessment.last_change
+    if changed is None:
+        return None
+    if lockout.entity.procedure_reviewed is None:
+        sheet.missing("lockout.procedure_reviewed")
+        return None
+    sheet.note("lockout.procedure_reviewed")
+    sheet.note("assessment.last_change")
+    return bool(lockout.entity.procedure_reviewed < changed)
+
+
 @fact(per="shaft", unit="N m", symbol="T_u", formulas=[unbalance.unbalance_torque])
 def unbalance_torque(sheet: FactSheet, shaft: Subject) -> Samples | None:
     """Largest torque by which static unbalance can turn the shaft."""

@@ -86,6 +86,24 @@ def values_past_calibration(sheet: FactSheet, _machine: Subject) -> Samples | No
 
 
 @fact(per="machine", word=True)
+def marked_speed_is_stated(sheet: FactSheet, _machine: Subject) -> Word | None:
+    """Whether a largest speed marked on a part is stated."""
+    return any(part.entity.max_rated_speed is not None for part in sheet.subjects.parts)
+
+
+@fact(per="machine", word=True)
+def wheel_use_is_stated(sheet: FactSheet, _machine: Subject) -> Word | None:
+    """Whether a guard states the use of the abrasive wheel behind it."""
+    return any(guard.entity.wheel_use is not None for guard in sheet.subjects.guards)
+
+
+@fact(per="machine", word=True)
+def fragment_is_stated(sheet: FactSheet, _machine: Subject) -> Word | None:
+    """Whether a part states the piece that could come off it."""
+    return any(part.entity.fragment is not None for part in sheet.subjects.parts)
+
+
+@fact(per="machine", word=True)
 def has_changed(sheet: FactSheet, _machine: Subject) -> Word | None:
     """Whether something is stated to have changed since the assessment, or changed on a later day."""
     record = sheet.file.assessment

@@ -188,6 +188,33 @@ def unbalance_force(mass: ArrayLike, radius: ArrayLike, *, speed: ArrayLike) -> 
     )
 
 
+@formula(equation="D = sqrt(4*A/pi)", unit="m", symbols={"area": "A"}, source="practice perforation formulas")
+def equivalent_diameter(area: ArrayLike) -> Array:
+    """Diameter of the round face of the same area as the face that hits.
+
+    Parameters
+    ----------
+    area : array_like
+        Area of the face [m²], > 0.
+
+    Returns
+    -------
+    ndarray
+        Diameter [m].
+
+    Raises
+    ------
+    ValueError
+        The area is not positive.
+
+    Examples
+    --------
+    >>> print(equivalent_diameter(np.pi))
+    2.0
+    """  # noqa: DOC502
+    return np.sqrt(4.0 * positive("area", area, "m²") / np.pi)
+
+
 _PERFORATION: float = 672.0 * _FOOT_POUND ** (2.0 / 3.0) / _INCH**2  # T[in] = E[ft lbf]^(2/3)/(672 D[in]) brought to SI
 
 

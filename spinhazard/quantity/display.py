@@ -50,9 +50,7 @@ def _step(value: float, unit: str, system: System) -> _Step:
     steps = (_US if system == "us" else _SI).get(unit)
     if steps is None:
         return _Step(0.0, unit, 1.0)
-    return (
-        next((step for step in steps if abs(value) >= step.at_least * (1.0 - 1e-12)), steps[-1]) if value else steps[0]
-    )
+    return next((step for step in steps if abs(value) >= step.at_least * (1.0 - 1e-12)), steps[-1])
 
 
 def number(value: float, *, figures: int = FIGURES) -> str:

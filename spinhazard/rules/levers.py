@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import difflib
 from functools import lru_cache
 from typing import Any, get_args
 
@@ -45,3 +46,20 @@ def is_lever(path: str) -> bool:
         True where there is such a field.
     """
     return path in _paths()
+
+
+def nearest_lever(path: str) -> str:
+    """The path that comes nearest to one that leads nowhere; only on the way to a message.
+
+    Parameters
+    ----------
+    path : str
+        As written.
+
+    Returns
+    -------
+    str
+        The nearest, or empty.
+    """
+    near = difflib.get_close_matches(path[:80], _paths(), n=1, cutoff=0.4)
+    return near[0] if near else ""

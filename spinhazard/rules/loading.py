@@ -7,41 +7,23 @@ import fnmatch
 import hashlib
 import re
 import tomllib
-from collections.abc import Iterable, Sequence
+from collections.abc import Iterable
 from dataclasses import dataclass
 from functools import lru_cache
 from importlib import resources
 from typing import Any
 
 from spinhazard.errors import CatalogueError, Complaint, quoted
-from spinhazard.facts import FACTS
-from spinhazard.facts.fact import Declaration
-from spinhazard.quantity.notation import NotationError, parse_stated
-from spinhazard.quantity.stated import Stated
-from spinhazard.rules.levers import is_lever
-from spinhazard.rules.rule import (
-    EACH,
-    FORBIDDEN_NAMES,
-    OUTCOMES,
-    URGENCIES,
-    WORDS,
-    Alternatives,
-    Comparison,
-    Condition,
-    Example,
-    Operand,
-    Rule,
-)  # fmt: skip
+from spinhazard.rules.conditions import KIND_OF_UNIT, RuleFault, conditions, nearest_of, one_of, policy_kind, reachable
+from spinhazard.rules.levers import is_lever, nearest_lever
+from spinhazard.rules.rule import EACH, FORBIDDEN_NAMES, OUTCOMES, URGENCIES, Example, Rule
 from spinhazard.sources import resolve
-from spinhazard.statement.policy import Policy
 
-KIND_OF_UNIT = {
-    "": "ratio", "m": "length", "kg": "mass", "s": "time", "rad/s": "angular speed", "m/s": "speed", "J": "energy", "N m": "torque",
-    "Pa": "stress", "K": "temperature difference", "kg/m³": "density", "N": "force", "rad": "angle", "kg m²": "inertia",
-}  # fmt: skip
-"""Kind of quantity that a literal compared with a fact of this unit is written in."""
+__all__ = ["KIND_OF_UNIT", "PLACEHOLDER", "Catalogue", "catalogue_of", "load_rules", "shipped_catalogue"]
+
 NEEDED = ("key", "since", "asks", "because", "each", "review", "urgency", "says", "basis")
 TAKEN = (*NEEDED, "applies", "measures", "example", "withdrawn", "withdrawn_because")
+TEXTS = ("key", "since", "asks", "because", "each", "urgency", "says", "withdrawn", "withdrawn_because")
 PLACEHOLDER = re.compile(r"\{([a-z_.]+)\}")
 
 
@@ -96,21 +78,40 @@ def shipped_catalogue() -> Catalogue:
     """
     folder = resources.files("spinhazard.rules").joinpath("catalogue")
     files = sorted((entry for entry in folder.iterdir() if entry.name.endswith(".toml")), key=lambda entry: entry.name)
-    texts = [(entry.name, entry.read_text("utf-8")) for entry in files]
-    rules = [rule for name, text in texts for rule in load_rules(text, name=name, family=name.removesuffix(".toml"))]
-    _refuse_twice(rules)
+    return catalogue_of((entry.name, entry.read_text("utf-8")) for entry in files)
+
+
+def catalogue_of(files: Iterable[tuple[str, str]]) -> Catalogue:
+    """A catalogue from the texts of its files.
+
+    Parameters
+    ----------
+    files : iterable of (str, str)
+        Name and text of each file; the name without ``.toml`` is the family.
+
+    Returns
+    -------
+    Catalogue
+        All rules in the order of the files.
+
+    Raises
+    ------
+    CatalogueError
+        With every complaint about the first file that is wrong, or two rules have the same key.
+    """
+    texts = tuple(files)
+    rules: dict[str, Rule] = {}
+    for name, text in texts:
+        for index, rule in enumerate(load_rules(text, name=name, family=name.removesuffix(".toml"))):
+            if rule.key in rules:
+                raise CatalogueError(
+                    Complaint(
+                        "another rule has this key", file=name, line=_line(text, index), field="key", stated=quoted(rule.key)
+                    )
+                )
+            rules[rule.key] = rule
     digest = hashlib.sha256("\x00".join(text for _, text in texts).encode()).hexdigest()
-    return Catalogue(rules=tuple(rules), digest=f"sha256:{digest}")
-
-
-def _refuse_twice(rules: Sequence[Rule]) -> None:
-    seen: set[str] = set()
-    for rule in rules:
-        if rule.key in seen:
-            raise CatalogueError(
-                Complaint("two rules have the same key", file=f"{rule.family}.toml", stated=quoted(rule.key))
-            )
-        seen.add(rule.key)
+    return Catalogue(rules=tuple(rules.values()), digest=f"sha256:{digest}")
 
 
 def load_rules(text: str, *, name: str, family: str) -> list[Rule]:
@@ -140,18 +141,21 @@ def load_rules(text: str, *, name: str, family: str) -> list[Rule]:
     except tomllib.TOMLDecodeError as error:
         raise CatalogueError(Complaint(f"not readable as TOML ({error})", file=name)) from None
     entries = raw.get("rule", [])
+    if not isinstance(entries, list) or not all(isinstance(entry, dict) for entry in entries):
+        raise CatalogueError(Complaint("rules are not written as [[rule]] tables", file=name, field="rule"))
     rules: list[Rule] = []
     complaints: list[Complaint] = []
     for index, entry in enumerate(entries):
         try:
             rules.append(_rule(entry, family))
-        except _RuleFault as fault:
+        except RuleFault as fault:
+            key = entry.get("key")
             complaints.append(
                 Complaint(
                     fault.problem,
                     file=name,
                     line=_line(text, index),
-                    field=f"{entry.get('key', f'rule {index + 1}')}.{fault.field}",
+                    field=f"{key if isinstance(key, str) else f'rule {index + 1}'}.{fault.field}",
                     stated=quoted(fault.stated) if fault.stated is not None else "",
                     accepted=fault.accepted,
                     nearest=fault.nearest,
@@ -164,169 +168,82 @@ def load_rules(text: str, *, name: str, family: str) -> list[Rule]:
 
 def _line(text: str, index: int) -> int:
     """Line of the n-th ``[[rule]]``; only on the way to a message."""
-    starts = [match.start() for match in re.finditer(r"^\s*\[\[rule\]\]", text, re.MULTILINE)]
+    starts = [match.start(1) for match in re.finditer(r"^[ \t]*(\[\[rule\]\])", text, re.MULTILINE)]
     return text.count("\n", 0, starts[index]) + 1 if index < len(starts) else 1
 
 
-class _RuleFault(Exception):  # noqa: N818
-    def __init__(
-        self, field: str, problem: str, *, stated: object = None, accepted: str = "", nearest: str = ""
-    ) -> None:
-        super().__init__(problem)
-        self.field, self.problem, self.stated, self.accepted, self.nearest = field, problem, stated, accepted, nearest
-
-
-def _nearest(word: object, words: Iterable[str]) -> str:
-    near = difflib.get_close_matches(str(word)[:80], list(words), n=1, cutoff=0.4)
-    return near[0] if near else ""
-
-
-def _one_of(field: str, word: object, words: Sequence[str]) -> str:
-    if not isinstance(word, str) or word not in words:
-        raise _RuleFault(
-            field, "not a word known here", stated=word, accepted=", ".join(words), nearest=_nearest(word, words)
-        )
-    return word
-
-
 def _rule(entry: dict[str, Any], family: str) -> Rule:
-    for field in entry:
-        if field not in TAKEN:
-            raise _RuleFault(
-                field, "no such field in a rule", accepted=", ".join(TAKEN), nearest=_nearest(field, TAKEN)
-            )
-    for field in NEEDED:
-        if field not in entry:
-            raise _RuleFault(field, "this field is needed and is not stated")
-    key = entry["key"]
+    _refuse_unfit_fields(entry)
+    key, each = entry["key"], one_of("each", entry["each"], EACH)
     if not re.fullmatch(r"[a-z0-9]+(-[a-z0-9]+)+", key) or any(
         fnmatch.fnmatch(key, pattern) for pattern in FORBIDDEN_NAMES
     ):
-        raise _RuleFault("key", "a key names the condition found, in lower case with hyphens", stated=key)
-    each = _one_of("each", entry["each"], EACH)
+        raise RuleFault("key", "a key names the condition found, in lower case with hyphens", stated=key)
     rule = Rule(
         key=key, family=family, since=entry["since"], asks=entry["asks"], because=entry["because"], each=each,
-        applies=_conditions("applies", entry.get("applies", []), each), review=_conditions("review", entry["review"], each),
-        urgency=_one_of("urgency", entry["urgency"], URGENCIES),  # type: ignore[arg-type]
+        applies=conditions("applies", entry.get("applies", []), each), review=conditions("review", entry["review"], each),
+        urgency=one_of("urgency", entry["urgency"], URGENCIES),  # type: ignore[arg-type]
         says=entry["says"], measures=tuple(entry.get("measures", ())), basis=tuple(entry["basis"]),
         examples=tuple(_example(example) for example in entry.get("example", ())), withdrawn=entry.get("withdrawn", ""),
+        withdrawn_because=entry.get("withdrawn_because", ""),
     )  # fmt: skip
     _refuse_unknown_names(rule)
     return rule
 
 
+def _refuse_unfit_fields(entry: dict[str, Any]) -> None:
+    """Fields that are unknown, missing, or not of the form a rule takes."""
+    for field, value in entry.items():
+        if field not in TAKEN:
+            raise RuleFault(field, "no such field in a rule", accepted=", ".join(TAKEN), nearest=nearest_of(field, TAKEN))
+        if field in TEXTS and not (isinstance(value, str) and value.strip()):
+            raise RuleFault(field, "not a text", stated=value)
+        if field in {"measures", "basis"} and not (
+            isinstance(value, list) and all(isinstance(item, str) for item in value)
+        ):
+            raise RuleFault(field, "not a list of texts", stated=value)
+        if field == "example" and not (isinstance(value, list) and all(isinstance(item, dict) for item in value)):
+            raise RuleFault(field, "examples are not written as [[rule.example]] tables", stated=value)
+    for field in NEEDED:
+        if field not in entry:
+            raise RuleFault(field, "this field is needed and is not stated")
+    if "withdrawn" in entry and "withdrawn_because" not in entry:
+        raise RuleFault("withdrawn_because", "a rule that was withdrawn says why")
+
+
 def _refuse_unknown_names(rule: Rule) -> None:
+    if not rule.review:
+        raise RuleFault("review", "nothing is compared")
+    if not rule.basis:
+        raise RuleFault("basis", "a rule needs a basis")
     for reference in rule.basis:
         try:
             resolve(reference)
         except LookupError as error:
-            raise _RuleFault("basis", str(error.args[0]).rstrip("."), stated=reference) from None
-    if not rule.basis:
-        raise _RuleFault("basis", "a rule needs a basis")
+            raise RuleFault("basis", str(error.args[0]).rstrip("."), stated=reference) from None
     for lever in rule.measures:
         if not is_lever(lever):
-            raise _RuleFault("measures", "no such field in an assessment file", stated=lever)
-    _refuse_unknown_placeholders(rule)
-    for example in rule.examples:
-        for name in example.given:
-            _reachable("example", name, rule.each)
-
-
-def _refuse_unknown_placeholders(rule: Rule) -> None:
+            raise RuleFault("measures", "no such field in an assessment file", stated=lever, nearest=nearest_lever(lever))
     for placeholder in PLACEHOLDER.findall(rule.says):
         if placeholder.startswith("policy."):
-            _policy_unit("says", placeholder)
+            policy_kind("says", placeholder)
         else:
-            _reachable("says", placeholder, rule.each)
-
-
-def _reachable(field: str, key: object, each: str) -> Declaration:
-    """The declaration of a fact that a rule about `each` may ask for."""
-    declaration = FACTS.get(key) if isinstance(key, str) else None
-    if declaration is None:
-        raise _RuleFault(field, "no such fact", stated=key, nearest=_nearest(key, FACTS))
-    if declaration.per not in {each, "machine", "lockout"} and not (each == "part" and declaration.per == "shaft"):
-        raise _RuleFault(field, f"a fact of each {declaration.per} cannot be asked for each {each}", stated=key)
-    return declaration
-
-
-def _conditions(field: str, entries: Any, each: str) -> tuple[Condition, ...]:
-    if not isinstance(entries, list):
-        raise _RuleFault(field, "not a list of conditions", stated=entries)
-    found: list[Condition] = []
-    for entry in entries:
-        if isinstance(entry, dict):
-            if set(entry) != {"any"} or not isinstance(entry["any"], list):
-                raise _RuleFault(
-                    field, "not a condition", stated=entry, accepted="[fact, word, value] or { any = [...] }"
-                )
-            found.append(Alternatives(tuple(_comparison(field, line, each) for line in entry["any"])))
-        else:
-            found.append(_comparison(field, entry, each))
-    return tuple(found)
-
-
-def _comparison(field: str, line: Any, each: str) -> Comparison:
-    if not isinstance(line, list) or len(line) not in {2, 3}:
-        raise _RuleFault(field, "not a condition", stated=line, accepted="[fact, word, value]")
-    declaration = _reachable(field, line[0], each)
-    word = _one_of(field, line[1], WORDS)
-    if word == "is stated":
-        return Comparison(declaration.key, word, Operand("value", "", line[2] if len(line) == 3 else True))
-    if len(line) != 3:
-        raise _RuleFault(field, "nothing to compare with", stated=line)
-    if word in {"exceeds", "is below"}:
-        if declaration.is_word:
-            raise _RuleFault(field, "a word cannot exceed or be below anything", stated=line[0])
-        return Comparison(declaration.key, word, _number_operand(field, line[2], declaration, each))
-    return Comparison(declaration.key, word, _word_operand(field, line[2], declaration, word))
-
-
-def _word_operand(field: str, right: Any, declaration: Declaration, word: str) -> Operand:
-    if not declaration.is_word:
-        raise _RuleFault(field, f'"{word}" compares words; {declaration.key} is a number', stated=right)
-    if word == "is one of":
-        if not isinstance(right, list) or not all(isinstance(item, str) for item in right):
-            raise _RuleFault(field, "not a list of words", stated=right)
-        return Operand("value", ", ".join(right), tuple(right))
-    if not isinstance(right, (str, bool)):
-        raise _RuleFault(field, "neither a word nor true or false", stated=right)
-    return Operand("value", str(right).lower() if isinstance(right, bool) else right, right)
-
-
-def _number_operand(field: str, right: Any, declaration: Declaration, each: str) -> Operand:
-    if isinstance(right, str) and right.startswith("policy."):
-        unit = _policy_unit(field, right)
-        if unit != KIND_OF_UNIT.get(declaration.unit, declaration.unit):
-            raise _RuleFault(field, f"{declaration.key} and {right} are of different kinds", stated=right)
-        return Operand("policy", right.removeprefix("policy."))
-    if isinstance(right, str) and right in FACTS:
-        other = _reachable(field, right, each)
-        if other.unit != declaration.unit or other.is_word:
-            raise _RuleFault(field, f"{declaration.key} and {right} are of different kinds", stated=right)
-        return Operand("fact", right)
-    try:
-        stated = parse_stated(right, KIND_OF_UNIT[declaration.unit])
-    except (NotationError, KeyError) as error:
-        raise _RuleFault(field, f"neither a fact, a policy setting, nor a value for {declaration.key} ({error})", stated=right,
-                         nearest=_nearest(right, FACTS)) from None  # fmt: skip
-    return Operand("value", str(right), stated.value)
-
-
-def _policy_unit(field: str, name: str) -> str:
-    setting = getattr(Policy(), name.removeprefix("policy."), None)
-    if isinstance(setting, Stated):
-        return setting.kind
-    if isinstance(setting, (int, float)) and not isinstance(setting, bool):
-        return "ratio"
-    raise _RuleFault(
-        field,
-        "no such number in the policy",
-        stated=name,
-        nearest=_nearest(name.removeprefix("policy."), Policy.model_fields),
-    )
+            reachable("says", placeholder, rule.each)
+    if re.search(r"[{}]", PLACEHOLDER.sub("", rule.says)):
+        raise RuleFault("says", "a brace that is no placeholder", stated=rule.says, accepted="{fact_key} or {policy.name}")
+    for example in rule.examples:
+        for name in example.given:
+            reachable("example.given", name, rule.each)
 
 
 def _example(entry: dict[str, Any]) -> Example:
-    expect = _one_of("example.expect", entry.get("expect"), OUTCOMES)
-    return Example(given=dict(entry.get("given", {})), expect=expect, note=entry.get("note", ""))  # type: ignore[arg-type]
+    for field in entry:
+        if field not in {"given", "expect", "note"}:
+            raise RuleFault(f"example.{field}", "no such field in an example", accepted="given, expect, note")
+    given, note = entry.get("given", {}), entry.get("note", "")
+    if not isinstance(given, dict):
+        raise RuleFault("example.given", "not a table of facts", stated=given)
+    if not isinstance(note, str):
+        raise RuleFault("example.note", "not a text", stated=note)
+    expect = one_of("example.expect", entry.get("expect"), OUTCOMES)
+    return Example(given=given, expect=expect, note=note)  # type: ignore[arg-type]

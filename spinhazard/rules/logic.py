@@ -53,11 +53,11 @@ def exceeds(left: NDArray[np.float64], right: NDArray[np.float64]) -> Truth:
     Returns
     -------
     ndarray, shape (n,) or (1,)
-        YES or NO.
+        YES or NO; UNKNOWN where a side is not a number, as never over never.
     """
     with np.errstate(invalid="ignore"):
         greater = left > right + np.where(np.isfinite(right), np.abs(right), 0.0) * _RELATIVE_WIDTH_OF_A_LIMIT
-    return np.where(greater, YES, NO).astype(np.int8)
+    return np.where(np.isnan(left) | np.isnan(right), UNKNOWN, np.where(greater, YES, NO)).astype(np.int8)
 
 
 def all_of(truths: Sequence[Truth]) -> Truth:
@@ -113,3 +113,20 @@ def likelihood(truth: Truth) -> float:
     """
     draws = truth[1:] if truth.size > 1 else truth
     return float(np.count_nonzero(draws == YES) / draws.size)
+
+
+def undecided(truth: Truth) -> float:
+    """Share of the draws in which nothing can be said.
+
+    Parameters
+    ----------
+    truth : ndarray, shape (n,) or (1,)
+        Entry 0 belongs to the best estimate and takes no part where there are draws.
+
+    Returns
+    -------
+    float
+        Between 0 and 1.
+    """
+    draws = truth[1:] if truth.size > 1 else truth
+    return float(np.count_nonzero(draws == UNKNOWN) / draws.size)

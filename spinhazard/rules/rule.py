@@ -81,6 +81,7 @@ class Rule:
     basis: tuple[str, ...]
     examples: tuple[Example, ...]
     withdrawn: str = ""
+    withdrawn_because: str = ""
 
     def comparisons(self) -> tuple[Comparison, ...]:
         """Every comparison of the rule, those of alternatives included.

@@ -88,6 +88,7 @@ class Policy(Model):
     stop_departure_limit: Ratio = _default(1.1, "ratio")
     speed_departure_limit: RatioOrZero = _default("5 %", "ratio")
     least_stop_measurements: Annotated[int, Field(ge=1, le=1000)] = 5
+    standstill_tip_speed_limit: LineSpeed = _default("100 mm/s", "speed")
     measurement_age_limit: Time = _default("1095 d", "time")
     procedure_age_limit: Time = _default("365 d", "time")
     fragment_energy_limit: Energy = _default("79 J", "energy")

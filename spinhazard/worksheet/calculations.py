@@ -1,0 +1,108 @@
+"""Every calculation: equation, the numbers put in, result with interval, source, and what it was made from."""
+
+from __future__ import annotations
+
+import numpy as np
+from reportlab.platypus import Flowable, Paragraph
+
+from spinhazard.assessment import equation_of
+from spinhazard.facts.fact import FACTS, Fact, Step
+from spinhazard.mechanics.formula import printed, with_numbers
+from spinhazard.quantity.display import display
+from spinhazard.sources import citation
+from spinhazard.worksheet.page import Sheet, heading
+from spinhazard.worksheet.style import BODY, CELL, GROUP, SMALL
+from spinhazard.worksheet.text import paragraph, plain, shares, table
+
+MOST_STEPS = 12
+UNITS = {
+    "mass": "kg", "length": "m", "diameter": "m", "bore": "m", "radius": "m", "thickness": "m", "width": "m", "offset": "m", "distance": "m",
+    "inertia": "kg m²", "gd2": "kg m²", "wk2": "kg m²", "time": "s", "torque": "N m", "energy": "J", "heat": "J", "power": "W", "volume": "m³",
+    "density": "kg/m³", "angle": "rad", "constant": "N m", "linear": "N m s", "quadratic": "N m s²", "stress": "Pa", "strength": "Pa",
+    "intrusion": "m", "resolution": "m", "radial": "m", "axial": "m", "tangential": "m", "area": "m²", "unbalance": "kg m",
+    "specific_heat": "J/(kg K)",
+}  # fmt: skip
+"""SI unit of an argument by the last word of its name; speeds depend on the formula."""
+
+
+def calculations(sheet: Sheet, number: int) -> list[Flowable]:
+    """All facts that are numbers, by subject.
+
+    Parameters
+    ----------
+    sheet : Sheet
+        What to print.
+    number : int
+        Number of the section.
+
+    Returns
+    -------
+    list of Flowable
+        Flowables.
+    """
+    text = (
+        "Each line gives the key, what it is, the equation, the equation with the best estimates put in, and the result with its interval. "
+        "“From” names what it was made from: other facts by key, stated values by their path in the assessment file, settings of the policy."
+    )
+    made = [*heading(number, "Calculations"), paragraph(text, BODY)]
+    by_subject: dict[str, list[Fact]] = {}
+    for fact in sheet.assessment.facts:
+        if isinstance(fact.value, np.ndarray) or fact.value is None:
+            by_subject.setdefault(fact.subject, []).append(fact)
+    for subject, facts in by_subject.items():
+        rows = [_row(sheet, fact) for fact in facts]
+        made.append(paragraph(subject, GROUP))
+        made.append(table(("fact", "equation and numbers", "result", "from"), rows, shares(sheet.width, (23, 37, 17, 23)), numbers=()))
+    return made
+
+
+def _row(sheet: Sheet, fact: Fact) -> list[str | Flowable | list[Flowable]]:
+    declaration = FACTS[fact.key]
+    symbol = f"{declaration.symbol}: " if declaration.symbol else ""
+    name = Paragraph(f'<a name="fact-{plain(fact.key)}"/><b>{plain(fact.key)}</b><br/>{plain(declaration.label)}', SMALL)
+    equation = equation_of(fact.key)
+    lines = [equation] if equation and not equation.startswith("see method") else []
+    lines += list(dict.fromkeys(line for step in fact.steps[:MOST_STEPS] if (line := _numbers(sheet, step))))
+    if len(fact.steps) > MOST_STEPS:
+        lines.append(f"and {len(fact.steps) - MOST_STEPS} further applications")
+    source = "; ".join(citation(part) for part in dict.fromkeys(declaration.source.split("; ")) if part)
+    middle: list[Flowable] = [paragraph(line, SMALL) for line in lines] or [paragraph("as stated", SMALL)]
+    if source:
+        middle.append(paragraph(f"[{source}]", SMALL))
+    result = f"{symbol}{sheet.of(fact, interval=True)}"
+    if fact.missing:
+        result += f" (missing: {', '.join(fact.missing)})"
+    if fact.failed:
+        result += f" ({fact.failed})"
+    if fact.outside:
+        result += f" (outside the range of the method: {'; '.join(fact.outside)})"
+    made_from = "; ".join(_short(name, fact.subject) for name in fact.asked)
+    return [name, middle, paragraph(result, CELL), paragraph(made_from, SMALL)]
+
+
+def _short(name: str, subject: str) -> str:
+    """A reference without its subject where that is the fact's own."""
+    key, bar, about = name.partition("|")
+    return key if not bar or about == subject else f"{key} of {about}"
+
+
+def _numbers(sheet: Sheet, step: Step) -> str:
+    """One application of a formula with its numbers."""
+    texts = {name: display(value, _unit(step, name), system=sheet.system) for name, value in step.arguments.items()}
+    result = display(step.result, step.formula.unit, system=sheet.system)
+    if step.formula.equation.startswith("see "):
+        arguments = ", ".join(f"{printed(step.formula.symbols.get(name, name))} = {text}" for name, text in texts.items())
+        return f"{step.formula.name}({arguments}) = {result}"
+    left = step.formula.equation.partition(" = ")[0]
+    return f"{printed(left)} = {with_numbers(step.formula, texts)} = {result}"
+
+
+def _unit(step: Step, name: str) -> str:
+    last = name.rpartition("_")[2]
+    if name == "specific_heat":
+        return UNITS[name]
+    if last == "speed":
+        return "m/s" if step.formula.symbols.get(name) in {"v", "v_f", "K"} else "rad/s"
+    if last == "work":
+        return "J"
+    return UNITS.get(name, UNITS.get(last, ""))

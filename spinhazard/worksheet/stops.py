@@ -1,0 +1,84 @@
+"""Stop cases: table, measured stops, speed and energy over time."""
+
+from __future__ import annotations
+
+from reportlab.platypus import Flowable, KeepTogether
+
+from spinhazard.quantity.display import display
+from spinhazard.worksheet.page import Sheet, heading
+from spinhazard.worksheet.stop_drawing import stop_drawing
+from spinhazard.worksheet.style import BODY, SMALL
+from spinhazard.worksheet.text import paragraph, shares, table
+
+COLUMNS = ("stopping_time", "stopping_turns", "energy_at_access", "brake_heat", "brake_temperature_rise", "brake_rating_use")
+
+
+def stops(sheet: Sheet, number: int) -> list[Flowable]:
+    """Stop cases.
+
+    Parameters
+    ----------
+    sheet : Sheet
+        What to print.
+    number : int
+        Number of the section.
+
+    Returns
+    -------
+    list of Flowable
+        Flowables.
+    """
+    file = sheet.assessment.file
+    if file.stopping is None:
+        return [*heading(number, "Stops"), paragraph("Nothing is stated about stopping, so no stop was computed.", BODY)]
+    credible = sheet.assessment.policy.credible_stops
+    rows = []
+    for stop in sheet.assessment.sheet.subjects.stops:
+        time = sheet.assessment.fact("stopping_time", stop.name)
+        cells = [sheet.of(time, interval=True) if time is not None else "–"]
+        cells += [sheet.number(key, stop.name) for key in COLUMNS[1:]]
+        rows.append([stop.entity + ("" if stop.entity in credible else " (not credible by policy)"), *cells])
+    heads = ("stop case", "time to standstill", "turns", "energy at access", "brake heat", "temp. rise", "heat/rating")
+    made = table(heads, rows, shares(sheet.width, (17, 25, 10, 14, 13, 11, 11)), numbers=(1, 2, 3, 4, 5, 6))
+    return [*heading(number, "Stops"), *_basis(sheet), made, *_measured(sheet), *_drawing(sheet)]
+
+
+def _basis(sheet: Sheet) -> list[Flowable]:
+    drag = "; ".join(f"{label} {sheet.number(key)}" for label, key in (
+        ("constant", "constant_drag"), ("per rad/s", "linear_drag"), ("per (rad/s)²", "quadratic_drag")))  # fmt: skip
+    stopping = sheet.assessment.file.stopping
+    conditions = f" Tried: {stopping.conditions}." if stopping is not None and stopping.conditions else ""
+    shaft = stopping.shaft if stopping is not None else ""
+    text = (
+        f"Referred to the shaft {shaft}, from {sheet.number('stopping_shaft_speed')}, with {sheet.number('referred_inertia')} of referred "
+        f"inertia and drag {drag}.{conditions} Normal stop: everything works. Power loss: no control delay, only brakes that work without "
+        f"supply. Brake failed: the strongest brake is absent."
+    )
+    return [paragraph(text, BODY)]
+
+
+def _measured(sheet: Sheet) -> list[Flowable]:
+    stopping = sheet.assessment.file.stopping
+    if stopping is None or not stopping.measured_times:
+        return []
+    readings = ", ".join(time.text for time in stopping.measured_times)
+    case = stopping.measured_case or "stop case not stated"
+    day = f" on {stopping.measured_on}" if stopping.measured_on else ""
+    value = sheet.number("measured_stopping_time")
+    text = f"Measured ({case}{day}): {readings}. Used: {value}, the longest, or mean + 3 s where there are five or more readings."
+    return [paragraph(text, SMALL)]
+
+
+def _drawing(sheet: Sheet) -> list[Flowable]:
+    drawing = stop_drawing(sheet)
+    if drawing is None:
+        return []
+    wait = sheet.assessment.fact("stated_wait", "lockout")
+    access = sheet.assessment.fact("earliest_access")
+    marks = []
+    if access is not None and access.known:
+        marks.append(f"A: earliest access, {display(access.best, 's')} into the stop")
+    if wait is not None and wait.known:
+        marks.append(f"W: stated wait, {display(wait.best, 's')}")
+    caption = "Speed (left) and energy of the drivetrain (right) over the time after the stop command, best estimate. " + "; ".join(marks)
+    return [KeepTogether([drawing, paragraph(caption.rstrip() + ("." if marks else ""), SMALL)])]

@@ -1,0 +1,63 @@
+"""One typographic scale, one grid, tables legible in black and white; fonts embedded."""
+
+from __future__ import annotations
+
+from functools import lru_cache
+from importlib import resources
+from typing import Any
+
+from reportlab.lib import colors
+from reportlab.lib.enums import TA_RIGHT
+from reportlab.lib.styles import ParagraphStyle
+from reportlab.lib.units import mm
+from reportlab.pdfbase import pdfmetrics
+from reportlab.pdfbase.ttfonts import TTFont
+
+PLAIN, BOLD = "DejaVuSansCondensed", "DejaVuSansCondensed-Bold"
+SIZE, LEADING = 8.4, 11.0
+RULE = colors.HexColor("#444444")
+FAINT = colors.HexColor("#BBBBBB")
+SHADE = colors.HexColor("#EEEEEE")
+MARGIN = 18 * mm
+
+
+@lru_cache(maxsize=1)
+def register_fonts() -> None:
+    """Make the shipped fonts known to reportlab, once."""
+    folder = resources.files("spinhazard.worksheet").joinpath("fonts")
+    for name in (PLAIN, BOLD):
+        with resources.as_file(folder.joinpath(f"{name}.ttf")) as path:
+            pdfmetrics.registerFont(TTFont(name, str(path)))
+    pdfmetrics.registerFontFamily(PLAIN, normal=PLAIN, bold=BOLD, italic=PLAIN, boldItalic=BOLD)
+
+
+def _style(name: str, **changes: Any) -> ParagraphStyle:
+    base: dict[str, Any] = {"fontName": PLAIN, "fontSize": SIZE, "leading": LEADING, "splitLongWords": 1}
+    return ParagraphStyle(name, **{**base, **changes})
+
+
+BODY = _style("body", spaceAfter=3)
+SMALL = _style("small", fontSize=7.2, leading=9.2)
+CELL = _style("cell", fontSize=7.6, leading=9.6)
+NUMBER = _style("number", fontSize=7.6, leading=9.6, alignment=TA_RIGHT)
+HEAD_CELL = _style("head cell", fontName=BOLD, fontSize=7.6, leading=9.6)
+HEAD_NUMBER = _style("head number", fontName=BOLD, fontSize=7.6, leading=9.6, alignment=TA_RIGHT)
+TITLE = _style("title", fontName=BOLD, fontSize=15, leading=18, spaceAfter=1)
+SUBTITLE = _style("subtitle", fontSize=10, leading=13, spaceAfter=4)
+SECTION = _style("section", fontName=BOLD, fontSize=11.5, leading=14, spaceBefore=10, spaceAfter=4, keepWithNext=1)
+GROUP = _style("group", fontName=BOLD, fontSize=9, leading=11.5, spaceBefore=6, spaceAfter=2, keepWithNext=1)
+FIGURE = _style("figure", fontName=BOLD, fontSize=13, leading=15)
+LABEL = _style("label", fontSize=7.2, leading=9)
+
+GRID = [
+    ("VALIGN", (0, 0), (-1, -1), "TOP"),
+    ("LINEABOVE", (0, 0), (-1, 0), 0.8, RULE),
+    ("LINEBELOW", (0, 0), (-1, 0), 0.6, RULE),
+    ("LINEBELOW", (0, 1), (-1, -1), 0.25, FAINT),
+    ("LINEBELOW", (0, -1), (-1, -1), 0.6, RULE),
+    ("LEFTPADDING", (0, 0), (-1, -1), 3),
+    ("RIGHTPADDING", (0, 0), (-1, -1), 3),
+    ("TOPPADDING", (0, 0), (-1, -1), 1.6),
+    ("BOTTOMPADDING", (0, 0), (-1, -1), 2),
+]
+"""Commands of every table: a strong rule round the head, faint ones between rows, no colour that carries meaning."""
