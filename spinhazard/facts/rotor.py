@@ -290,14 +290,26 @@ def highest_tip_speed(sheet: FactSheet, _machine: Subject) -> Samples:
 @fact(per="machine", symbol="share", equation="Σ E_estimated / E", source="jcgm-100 4.3.1")
 def estimated_energy_share(sheet: FactSheet, _machine: Subject) -> Samples:
     """Share of the stored energy whose inertia or speed rests on a value marked as estimated."""
-    estimated = [sheet("kinetic_energy", part) for part in sheet.subjects.parts if _rests_on_estimate(part)]
+    estimated = [sheet("kinetic_energy", part) for part in sheet.subjects.parts if _rests_on_estimate(sheet, part)]
     return _total([np.zeros(1), *estimated]) / sheet("stored_energy")
 
 
-def _rests_on_estimate(part: Subject) -> bool:
-    entities = [part.entity, part.parent.entity] if part.parent is not None else [part.entity]
-    values = [getattr(entity, name) for entity in entities for name in type(entity).model_fields]
-    return any(getattr(value, "source_class", None) == "estimated" for value in values)
+def _rests_on_estimate(sheet: FactSheet, part: Subject) -> bool:
+    """Whether a value marked as estimated stands behind the part's inertia or its shaft's speed."""
+    asked = {"kinetic_energy|" + part.name}
+    seen: set[str] = set()
+    while asked:
+        name = asked.pop()
+        seen.add(name)
+        key, bar, about = name.partition("|")
+        if not bar:
+            if name in sheet.stated and sheet.stated[name].source_class == "estimated":
+                return True
+            continue
+        subject = next(entry for entry in sheet.subjects.all() if entry.name == about)
+        fact = sheet.fact(key, subject)
+        asked |= set(fact.asked if fact is not None else ()) - seen
+    return False
 
 
 def _total(terms: list[Samples]) -> Samples:

@@ -19,7 +19,13 @@ class _Step(NamedTuple):
 _SI: dict[str, tuple[_Step, ...]] = {
     "m": (_Step(1.0, "m", 1.0), _Step(0.0, "mm", 1e-3)),
     "kg": (_Step(0.1, "kg", 1.0), _Step(0.0, "g", 1e-3)),
-    "s": (_Step(5400.0, "h", 3600.0), _Step(600.0, "min", 60.0), _Step(0.1, "s", 1.0), _Step(0.0, "ms", 1e-3)),
+    "s": (
+        _Step(172800.0, "d", 86400.0),
+        _Step(5400.0, "h", 3600.0),
+        _Step(600.0, "min", 60.0),
+        _Step(0.1, "s", 1.0),
+        _Step(0.0, "ms", 1e-3),
+    ),
     "rad/s": (_Step(0.0, "rpm", 2.0 * math.pi / 60.0),),
     "J": (_Step(1e6, "MJ", 1e6), _Step(1e3, "kJ", 1e3), _Step(0.0, "J", 1.0)),
     "W": (_Step(1e6, "MW", 1e6), _Step(1e3, "kW", 1e3), _Step(0.0, "W", 1.0)),

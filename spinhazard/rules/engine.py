@@ -128,9 +128,7 @@ def _decided(view: View, rule: Rule, subject: str, met: logic.Truth, *, tail: fl
         return _finding(view, rule, subject, "borderline", share, f"{view.message()} {note}")
     reasons = view.why_not((*rule.applies, *rule.review), "Not met")
     doubts = _doubts(view, met, tail)
-    return _finding(
-        view, rule, subject, "borderline" if doubts else "not flagged", share, " ".join((reasons, *doubts))
-    )
+    return _finding(view, rule, subject, "borderline" if doubts else "not flagged", share, " ".join((reasons, *doubts)))
 
 
 def _doubts(view: View, met: logic.Truth, tail: float) -> list[str]:

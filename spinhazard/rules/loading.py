@@ -106,7 +106,11 @@ def catalogue_of(files: Iterable[tuple[str, str]]) -> Catalogue:
             if rule.key in rules:
                 raise CatalogueError(
                     Complaint(
-                        "another rule has this key", file=name, line=_line(text, index), field="key", stated=quoted(rule.key)
+                        "another rule has this key",
+                        file=name,
+                        line=_line(text, index),
+                        field="key",
+                        stated=quoted(rule.key),
                     )
                 )
             rules[rule.key] = rule
@@ -195,7 +199,9 @@ def _refuse_unfit_fields(entry: dict[str, Any]) -> None:
     """Fields that are unknown, missing, or not of the form a rule takes."""
     for field, value in entry.items():
         if field not in TAKEN:
-            raise RuleFault(field, "no such field in a rule", accepted=", ".join(TAKEN), nearest=nearest_of(field, TAKEN))
+            raise RuleFault(
+                field, "no such field in a rule", accepted=", ".join(TAKEN), nearest=nearest_of(field, TAKEN)
+            )
         if field in TEXTS and not (isinstance(value, str) and value.strip()):
             raise RuleFault(field, "not a text", stated=value)
         if field in {"measures", "basis"} and not (
@@ -223,14 +229,18 @@ def _refuse_unknown_names(rule: Rule) -> None:
             raise RuleFault("basis", str(error.args[0]).rstrip("."), stated=reference) from None
     for lever in rule.measures:
         if not is_lever(lever):
-            raise RuleFault("measures", "no such field in an assessment file", stated=lever, nearest=nearest_lever(lever))
+            raise RuleFault(
+                "measures", "no such field in an assessment file", stated=lever, nearest=nearest_lever(lever)
+            )
     for placeholder in PLACEHOLDER.findall(rule.says):
         if placeholder.startswith("policy."):
             policy_kind("says", placeholder)
         else:
             reachable("says", placeholder, rule.each)
     if re.search(r"[{}]", PLACEHOLDER.sub("", rule.says)):
-        raise RuleFault("says", "a brace that is no placeholder", stated=rule.says, accepted="{fact_key} or {policy.name}")
+        raise RuleFault(
+            "says", "a brace that is no placeholder", stated=rule.says, accepted="{fact_key} or {policy.name}"
+        )
     for example in rule.examples:
         for name in example.given:
             reachable("example.given", name, rule.each)

@@ -10,17 +10,19 @@ from spinhazard.facts.fact import FACTS, Fact, Step
 from spinhazard.mechanics.formula import printed, with_numbers
 from spinhazard.quantity.display import display
 from spinhazard.sources import citation
-from spinhazard.worksheet.page import Sheet, heading
-from spinhazard.worksheet.style import BODY, CELL, GROUP, SMALL
+from spinhazard.worksheet.page import Sheet, group, heading
+from spinhazard.worksheet.style import BODY, CELL, SMALL
 from spinhazard.worksheet.text import paragraph, plain, shares, table
 
 MOST_STEPS = 12
 UNITS = {
-    "mass": "kg", "length": "m", "diameter": "m", "bore": "m", "radius": "m", "thickness": "m", "width": "m", "offset": "m", "distance": "m",
-    "inertia": "kg m²", "gd2": "kg m²", "wk2": "kg m²", "time": "s", "torque": "N m", "energy": "J", "heat": "J", "power": "W", "volume": "m³",
-    "density": "kg/m³", "angle": "rad", "constant": "N m", "linear": "N m s", "quadratic": "N m s²", "stress": "Pa", "strength": "Pa",
-    "intrusion": "m", "resolution": "m", "radial": "m", "axial": "m", "tangential": "m", "area": "m²", "unbalance": "kg m",
-    "specific_heat": "J/(kg K)",
+    **dict.fromkeys(
+        ("length", "diameter", "bore", "radius", "thickness", "width", "offset", "distance", "intrusion", "resolution", "radial", "axial",
+         "tangential"), "m",
+    ),
+    "mass": "kg", "inertia": "kg m²", "gd2": "kg m²", "wk2": "kg m²", "time": "s", "torque": "N m", "energy": "J", "heat": "J",
+    "power": "W", "volume": "m³", "density": "kg/m³", "angle": "rad", "constant": "N m", "linear": "N m s", "quadratic": "N m s²", "stress": "Pa",
+    "strength": "Pa", "area": "m²", "unbalance": "kg m", "specific_heat": "J/(kg K)",
 }  # fmt: skip
 """SI unit of an argument by the last word of its name; speeds depend on the formula."""
 
@@ -42,7 +44,7 @@ def calculations(sheet: Sheet, number: int) -> list[Flowable]:
     """
     text = (
         "Each line gives the key, what it is, the equation, the equation with the best estimates put in, and the result with its interval. "
-        "“From” names what it was made from: other facts by key, stated values by their path in the assessment file, settings of the policy."
+        "“From” names what it was made from: other facts by key, stated values by their path in the file, settings of the policy."
     )
     made = [*heading(number, "Calculations"), paragraph(text, BODY)]
     by_subject: dict[str, list[Fact]] = {}
@@ -51,22 +53,28 @@ def calculations(sheet: Sheet, number: int) -> list[Flowable]:
             by_subject.setdefault(fact.subject, []).append(fact)
     for subject, facts in by_subject.items():
         rows = [_row(sheet, fact) for fact in facts]
-        made.append(paragraph(subject, GROUP))
-        made.append(table(("fact", "equation and numbers", "result", "from"), rows, shares(sheet.width, (23, 37, 17, 23)), numbers=()))
+        made += group(subject)
+        made.append(
+            table(
+                ("fact", "equation and numbers", "result", "from"),
+                rows,
+                shares(sheet.width, (23, 37, 17, 23)),
+                numbers=(),
+            )
+        )
     return made
 
 
 def _row(sheet: Sheet, fact: Fact) -> list[str | Flowable | list[Flowable]]:
     declaration = FACTS[fact.key]
     symbol = f"{declaration.symbol}: " if declaration.symbol else ""
-    name = Paragraph(f'<a name="fact-{plain(fact.key)}"/><b>{plain(fact.key)}</b><br/>{plain(declaration.label)}', SMALL)
-    equation = equation_of(fact.key)
-    lines = [equation] if equation and not equation.startswith("see method") else []
-    lines += list(dict.fromkeys(line for step in fact.steps[:MOST_STEPS] if (line := _numbers(sheet, step))))
-    if len(fact.steps) > MOST_STEPS:
-        lines.append(f"and {len(fact.steps) - MOST_STEPS} further applications")
-    source = "; ".join(citation(part) for part in dict.fromkeys(declaration.source.split("; ")) if part)
-    middle: list[Flowable] = [paragraph(line, SMALL) for line in lines] or [paragraph("as stated", SMALL)]
+    name = Paragraph(
+        f'<a name="fact-{plain(fact.key)}"/><b>{plain(fact.key)}</b><br/>{plain(declaration.label)}', SMALL
+    )
+    middle: list[Flowable] = [paragraph(line, SMALL) for line in _lines(sheet, fact)] or [
+        paragraph(_taken(fact), SMALL)
+    ]
+    source = "; ".join(citation(part) for part in _sources(fact))
     if source:
         middle.append(paragraph(f"[{source}]", SMALL))
     result = f"{symbol}{sheet.of(fact, interval=True)}"
@@ -76,14 +84,44 @@ def _row(sheet: Sheet, fact: Fact) -> list[str | Flowable | list[Flowable]]:
         result += f" ({fact.failed})"
     if fact.outside:
         result += f" (outside the range of the method: {'; '.join(fact.outside)})"
-    made_from = "; ".join(_short(name, fact.subject) for name in fact.asked)
+    path = next(subject.path for subject in sheet.assessment.sheet.subjects.all() if subject.name == fact.subject)
+    made_from = "; ".join(_short(name, fact.subject, path) for name in fact.asked)
     return [name, middle, paragraph(result, CELL), paragraph(made_from, SMALL)]
 
 
-def _short(name: str, subject: str) -> str:
+def _lines(sheet: Sheet, fact: Fact) -> list[str]:
+    """Equation and the formulas with numbers; of a fact that chooses among formulas, only those it used."""
+    declaration = FACTS[fact.key]
+    own = declaration.equation != "; ".join(dict.fromkeys(formula.equation for formula in declaration.formulas))
+    equations = [equation_of(fact.key)] if own and declaration.equation else []
+    equations += [printed(step.formula.equation) for step in fact.steps if not own]
+    lines = [line for line in equations if not line.startswith("see method")]
+    lines += [_numbers(sheet, step) for step in fact.steps[:MOST_STEPS]]
+    if len(fact.steps) > MOST_STEPS:
+        lines.append(f"and {len(fact.steps) - MOST_STEPS} further applications")
+    return list(dict.fromkeys(lines))
+
+
+def _taken(fact: Fact) -> str:
+    """Where a value comes from that no formula made."""
+    if any(name.startswith("material ") for name in fact.asked):
+        return "from the table of materials"
+    if fact.asked and all(name.startswith("policy.") for name in fact.asked):
+        return "from the policy"
+    return "as stated" if fact.known else "–"
+
+
+def _sources(fact: Fact) -> list[str]:
+    used = [step.formula.source for step in fact.steps]
+    return list(dict.fromkeys(used or [part for part in FACTS[fact.key].source.split("; ") if part]))
+
+
+def _short(name: str, subject: str, path: str) -> str:
     """A reference without its subject where that is the fact's own."""
     key, bar, about = name.partition("|")
-    return key if not bar or about == subject else f"{key} of {about}"
+    if bar:
+        return key if about == subject else f"{key} of {about}"
+    return f"stated {name.removeprefix(path + '.')}" if name.startswith(path + ".") else name
 
 
 def _numbers(sheet: Sheet, step: Step) -> str:
@@ -91,7 +129,9 @@ def _numbers(sheet: Sheet, step: Step) -> str:
     texts = {name: display(value, _unit(step, name), system=sheet.system) for name, value in step.arguments.items()}
     result = display(step.result, step.formula.unit, system=sheet.system)
     if step.formula.equation.startswith("see "):
-        arguments = ", ".join(f"{printed(step.formula.symbols.get(name, name))} = {text}" for name, text in texts.items())
+        arguments = ", ".join(
+            f"{printed(step.formula.symbols.get(name, name))} = {text}" for name, text in texts.items()
+        )
         return f"{step.formula.name}({arguments}) = {result}"
     left = step.formula.equation.partition(" = ")[0]
     return f"{printed(left)} = {with_numbers(step.formula, texts)} = {result}"

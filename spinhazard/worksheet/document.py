@@ -70,10 +70,20 @@ class _Document(BaseDocTemplate):  # type: ignore[misc]  # reportlab has no type
         machine = assessment.file.machine
         super().__init__(
             target, pagesize=pagesize, invariant=1, title=drawable(f"{machine.tag} {machine.name} worksheet".replace("  ", " ")),
-            author=drawable(assessment.file.assessment.assessor) or "not stated", subject="Stored rotational energy, stopping, access, lockout",
+            author=drawable(assessment.file.assessment.assessor) or "not stated",
+            subject="Stored rotational energy, stopping, access, lockout",
             creator=assessment.program, lang="en", leftMargin=MARGIN, rightMargin=MARGIN, topMargin=24 * mm, bottomMargin=20 * mm,
         )  # fmt: skip
-        frame = Frame(MARGIN, 20 * mm, pagesize[0] - 2 * MARGIN, pagesize[1] - 42 * mm, leftPadding=0, rightPadding=0, topPadding=0, bottomPadding=0)
+        frame = Frame(
+            MARGIN,
+            20 * mm,
+            pagesize[0] - 2 * MARGIN,
+            pagesize[1] - 42 * mm,
+            leftPadding=0,
+            rightPadding=0,
+            topPadding=0,
+            bottomPadding=0,
+        )
         self.addPageTemplates(PageTemplate(id="page", frames=[frame]))
 
     def afterFlowable(self, flowable: Flowable) -> None:  # noqa: N802  (reportlab's name)
@@ -88,7 +98,7 @@ class _Pages(Canvas):  # type: ignore[misc]  # reportlab has no types
     """Holds the pages back until their number is known, then adds head and foot to each."""
 
     def __init__(self, *arguments: Any, assessment: Assessment, **named: Any) -> None:
-        super().__init__(*arguments, **named)
+        super().__init__(*arguments, **{**named, "initialFontName": PLAIN})
         self._assessment = assessment
         self._held: list[dict[str, Any]] = []
 
@@ -112,7 +122,9 @@ class _Pages(Canvas):  # type: ignore[misc]  # reportlab has no types
         self.line(MARGIN, height - 16 * mm, width - MARGIN, height - 16 * mm)
         self.line(MARGIN, 15.5 * mm, width - MARGIN, 15.5 * mm)
         self.setFont(BOLD, 7.5)
-        self.drawString(MARGIN, height - 14 * mm, _cut(f"{machine.tag}  {machine.name}", BOLD, width - 2 * MARGIN - 150))
+        self.drawString(
+            MARGIN, height - 14 * mm, _cut(f"{machine.tag}  {machine.name}", BOLD, width - 2 * MARGIN - 150)
+        )
         self.setFont(PLAIN, 7.5)
         self.drawRightString(width - MARGIN, height - 14 * mm, right)
         self.setFont(PLAIN, 6.6)

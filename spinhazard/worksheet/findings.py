@@ -7,8 +7,8 @@ from reportlab.platypus import Flowable, KeepTogether, Paragraph
 from spinhazard.rules.engine import Finding
 from spinhazard.rules.rule import URGENCIES
 from spinhazard.sources import citation
-from spinhazard.worksheet.page import Sheet, heading
-from spinhazard.worksheet.style import BODY, GROUP, SMALL
+from spinhazard.worksheet.page import Sheet, group, heading
+from spinhazard.worksheet.style import BODY, SMALL
 from spinhazard.worksheet.text import paragraph, plain, shares, table
 
 MARKS = {"for review": "■ for review", "borderline": "◪ borderline", "data missing": "□ data missing"}
@@ -33,10 +33,15 @@ def findings(sheet: Sheet, number: int) -> list[Flowable]:
     made = heading(number, "Findings")
     any_found = False
     for urgency in URGENCIES:
-        found = [f for o in ("for review", "borderline") for f in sheet.assessment.findings if f.outcome == o and f.rule.urgency == urgency]
+        found = [
+            f
+            for o in ("for review", "borderline")
+            for f in sheet.assessment.findings
+            if f.outcome == o and f.rule.urgency == urgency
+        ]
         if found:
             any_found = True
-            made.append(paragraph(urgency[0].upper() + urgency[1:], GROUP))
+            made += group(urgency[0].upper() + urgency[1:])
             made += [_finding(finding) for finding in found]
     if not any_found:
         made.append(paragraph("Nothing is for review or borderline among the rules that could be decided.", BODY))
@@ -49,7 +54,12 @@ def _finding(finding: Finding) -> Flowable:
     head = f"<b>{plain(MARKS[finding.outcome])}{likelihood}: {plain(rule.key)}</b> · {plain(finding.subject)}"
     basis = "; ".join(citation(reference) for reference in rule.basis)
     numbers = ", ".join(dict.fromkeys(name.partition("|")[0] for name in finding.facts))
-    lines = [Paragraph(head, BODY), paragraph(finding.says, BODY), paragraph(f"Why: {rule.because}", SMALL), paragraph(f"Basis: {basis}.", SMALL)]
+    lines = [
+        Paragraph(head, BODY),
+        paragraph(finding.says, BODY),
+        paragraph(f"Why: {rule.because}", SMALL),
+        paragraph(f"Basis: {basis}.", SMALL),
+    ]
     if rule.measures:
         lines.append(paragraph(f"May be changed: {', '.join(rule.measures)}.", SMALL))
     lines.append(paragraph(f"Decided on: {numbers}.", SMALL.clone("decided", spaceAfter=5)))
@@ -108,6 +118,10 @@ def looked_at(sheet: Sheet, number: int) -> list[Flowable]:
     made = heading(number, "Looked at and not flagged")
     if rows:
         made.append(table(("rule", "subject", "as compared"), rows, shares(sheet.width, (26, 22, 52))))
-    made.append(paragraph("Not applicable here", GROUP))
-    made.append(paragraph("; ".join(f"{key} ({len(names)})" for key, names in absent.items()) + "." if absent else "None.", SMALL))
+    made += group("Not applicable here")
+    made.append(
+        paragraph(
+            "; ".join(f"{key} ({len(names)})" for key, names in absent.items()) + "." if absent else "None.", SMALL
+        )
+    )
     return made

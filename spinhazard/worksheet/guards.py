@@ -4,8 +4,8 @@ from __future__ import annotations
 
 from reportlab.platypus import Flowable
 
-from spinhazard.worksheet.page import Sheet, heading
-from spinhazard.worksheet.style import BODY, GROUP
+from spinhazard.worksheet.page import Sheet, group, heading
+from spinhazard.worksheet.style import BODY
 from spinhazard.worksheet.text import paragraph, shares, table
 
 
@@ -57,9 +57,14 @@ def _openings(sheet: Sheet) -> list[Flowable]:
         for guard in sheet.assessment.sheet.subjects.guards if guard.entity.openings
     ]  # fmt: skip
     figures = "ISO 13857 table 4" if sheet.assessment.policy.figures == "iso" else "29 CFR 1910.217 table O-10"
-    made = table(("guard", "no.", "opening", "size", "distance to moving part"), rows, shares(sheet.width, (35, 8, 15, 20, 22)), numbers=(3, 4))
+    made = table(
+        ("guard", "no.", "opening", "size", "distance to moving part"),
+        rows,
+        shares(sheet.width, (35, 8, 15, 20, 22)),
+        numbers=(3, 4),
+    )
     text = f"Nearest to its limit ({figures}): " + "; ".join(limits) + "."
-    return [paragraph("Openings", GROUP), made, paragraph(text, BODY)]
+    return [*group("Openings"), made, paragraph(text, BODY)]
 
 
 def _containment(sheet: Sheet) -> list[Flowable]:
@@ -67,11 +72,18 @@ def _containment(sheet: Sheet) -> list[Flowable]:
     for guard in sheet.assessment.sheet.subjects.guards:
         if sheet.assessment.fact("fragment_energy", guard.name) is None:
             continue
-        keys = ("fragment_part", "fragment_speed", "fragment_energy", "perforation_thickness", "design_thickness", "guard_thickness")
+        keys = (
+            "fragment_part",
+            "fragment_speed",
+            "fragment_energy",
+            "perforation_thickness",
+            "design_thickness",
+            "guard_thickness",
+        )
         rows.append([guard.entity.id, *(sheet.number(key, guard.name) for key in keys)])
     if not rows:
         return []
     heads = ("guard", "worst piece", "its speed", "its energy", "perforates", "× 1.25", "guard wall")
     made = table(heads, rows, shares(sheet.width, (22, 20, 12, 12, 12, 11, 11)), numbers=(2, 3, 4, 5, 6))
     text = "Screening by a formula for steel plate hit by a stiff missile; it does not replace a test of the guard."
-    return [paragraph("What could come off", GROUP), made, paragraph(text, BODY)]
+    return [*group("What could come off"), made, paragraph(text, BODY)]

@@ -6,7 +6,7 @@ from reportlab.platypus import Flowable, Table
 
 from spinhazard.assessment import CAUTIONS
 from spinhazard.worksheet.page import Sheet
-from spinhazard.worksheet.style import BODY, BOLD, CELL, FAINT, LABEL, RULE, SMALL, SUBTITLE, TITLE
+from spinhazard.worksheet.style import BODY, BOLD, CELL, FAINT, LABEL, PLAIN, RULE, SMALL, SUBTITLE, TITLE
 from spinhazard.worksheet.text import paragraph, shares
 
 
@@ -34,10 +34,13 @@ def identity(sheet: Sheet) -> list[Flowable]:
     shown = [(label, text) for label, text in pairs if text]
     cells = [[paragraph(label, LABEL), paragraph(text, CELL)] for label, text in shown]
     half = (len(cells) + 1) // 2
-    rows = [[*cells[i], *(cells[half + i] if half + i < len(cells) else ["", ""])] for i in range(half)]
+    rows = [
+        [*cells[i], *(cells[half + i] if half + i < len(cells) else [paragraph(""), paragraph("")])]
+        for i in range(half)
+    ]
     block = Table(rows, colWidths=shares(sheet.width, (13, 37, 13, 37)))
     block.setStyle([
-        ("VALIGN", (0, 0), (-1, -1), "TOP"), ("LINEBELOW", (0, 0), (-1, -1), 0.25, FAINT), ("LINEABOVE", (0, 0), (-1, 0), 0.8, RULE),
+        ("FONTNAME", (0, 0), (-1, -1), PLAIN), ("VALIGN", (0, 0), (-1, -1), "TOP"), ("LINEBELOW", (0, 0), (-1, -1), 0.25, FAINT), ("LINEABOVE", (0, 0), (-1, 0), 0.8, RULE),
         ("LEFTPADDING", (0, 0), (-1, -1), 0), ("TOPPADDING", (0, 0), (-1, -1), 1.5), ("BOTTOMPADDING", (0, 0), (-1, -1), 1.5),
     ])  # fmt: skip
     return [
@@ -49,10 +52,13 @@ def identity(sheet: Sheet) -> list[Flowable]:
 
 
 def _cautions(sheet: Sheet) -> Table:
-    lines = [[paragraph("Cautions", BODY.clone("cautions", fontName=BOLD))], *([paragraph(text, SMALL)] for text in CAUTIONS)]
+    lines = [
+        [paragraph("Cautions", BODY.clone("cautions", fontName=BOLD))],
+        *([paragraph(text, SMALL)] for text in CAUTIONS),
+    ]
     box = Table(lines, colWidths=[sheet.width], spaceBefore=6, spaceAfter=4)
     box.setStyle([
-        ("BOX", (0, 0), (-1, -1), 1.0, RULE), ("LEFTPADDING", (0, 0), (-1, -1), 6), ("TOPPADDING", (0, 0), (-1, -1), 1),
+        ("FONTNAME", (0, 0), (-1, -1), PLAIN), ("BOX", (0, 0), (-1, -1), 1.0, RULE), ("LEFTPADDING", (0, 0), (-1, -1), 6), ("TOPPADDING", (0, 0), (-1, -1), 1),
         ("BOTTOMPADDING", (0, 0), (-1, -1), 1), ("BOTTOMPADDING", (0, -1), (-1, -1), 4), ("TOPPADDING", (0, 0), (-1, 0), 3),
     ])  # fmt: skip
     return box

@@ -29,7 +29,7 @@ def inputs(sheet: Sheet, number: int) -> list[Flowable]:
         Flowables.
     """
     rows = [_row(sheet, path, stated) for path, stated in values_of(sheet.assessment.file)]
-    text = "Paths are those of the assessment file. A spread marked “policy” was not stated and is the policy's for the class of the source."
+    text = "Paths are those of the assessment file. A spread marked “policy” was not stated and is the policy's for its kind of source."
     heads = ("value", "as written", "SI", "half-width used", "source, note, instrument")
     made = table(heads, rows, shares(sheet.width, (32, 17, 15, 13, 23)), numbers=(2, 3))
     return [*heading(number, "Stated values"), paragraph(text, BODY), made]
@@ -39,10 +39,18 @@ def _row(sheet: Sheet, path: str, stated: Stated) -> list[str | Flowable | list[
     unit = KINDS[stated.kind].si
     spread = "none"
     if stated.half_width:
-        spread = figures_of(stated.half_width, figures=3) + (f" (k={stated.coverage_factor:g})" if stated.coverage_factor else "")
+        spread = figures_of(stated.half_width, figures=3) + (
+            f" (k={stated.coverage_factor:g})" if stated.coverage_factor else ""
+        )
     elif stated.value and stated.half_width is None and (share := sheet.assessment.sheet.relative_spread(stated)):
         spread = f"{figures_of(share * abs(stated.value), figures=3)} (policy)"
     origin = [text for text in (stated.source, stated.note, stated.instrument) if text]
     if stated.calibration_due is not None:
         origin.append(f"calibrated until {stated.calibration_due}")
-    return [path, stated.text, f"{figures_of(stated.value)} {unit}".rstrip(), spread, "; ".join(origin) or "no source stated"]
+    return [
+        path,
+        stated.text,
+        f"{figures_of(stated.value)} {unit}".rstrip(),
+        spread,
+        "; ".join(origin) or "no source stated",
+    ]

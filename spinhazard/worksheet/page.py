@@ -5,13 +5,16 @@ from __future__ import annotations
 from dataclasses import dataclass
 
 import numpy as np
-from reportlab.platypus import Flowable, Paragraph
+from reportlab.platypus import CondPageBreak, Flowable, Paragraph
 
 from spinhazard.assessment import Assessment
 from spinhazard.facts.fact import Fact
 from spinhazard.quantity.display import System, display, display_interval
-from spinhazard.worksheet.style import SECTION
+from spinhazard.worksheet.style import GROUP, SECTION
 from spinhazard.worksheet.text import plain
+
+ROOM_BELOW_A_HEADING = 90.0
+"""Points a heading needs below it, its own height included, to stay on the page."""
 
 
 @dataclass(frozen=True)
@@ -96,4 +99,20 @@ def heading(number: int, title: str) -> list[Flowable]:
     text = f"{number}  {title}"
     made = Paragraph(f'<a name="section-{number}"/>{plain(text)}', SECTION)
     made.outline = (text, f"section-{number}")
-    return [made]
+    return [CondPageBreak(ROOM_BELOW_A_HEADING), made]
+
+
+def group(title: str) -> list[Flowable]:
+    """Heading inside a section, never the last line of a page.
+
+    Parameters
+    ----------
+    title : str
+        Title.
+
+    Returns
+    -------
+    list of Flowable
+        The heading.
+    """
+    return [CondPageBreak(ROOM_BELOW_A_HEADING), Paragraph(plain(title), GROUP)]

@@ -29,7 +29,11 @@ def signoff(sheet: Sheet, number: int) -> list[Flowable]:
         "A signature says that the stated values and the decisions taken on the findings were checked by the person named. It does not say "
         "that the machine meets any law or standard; that judgement lies with qualified, licensed safety professionals under local codes."
     )
-    rows = [["prepared by", record.assessor, record.role, "", ""], ["checked by", "", "", "", ""], ["released by", "", "", "", ""]]
+    rows = [
+        ["prepared by", record.assessor, record.role, "", ""],
+        ["checked by", "", "", "", ""],
+        ["released by", "", "", "", ""],
+    ]
     made = table(("", "name", "role", "day", "signature"), rows, shares(sheet.width, (16, 26, 22, 12, 24)))
     made.setStyle([("BOTTOMPADDING", (0, 1), (-1, -1), 16), ("TOPPADDING", (0, 1), (-1, -1), 6)])
     return [KeepTogether([*heading(number, "Signatures"), paragraph(text, BODY), made])]

@@ -52,7 +52,7 @@ def stop_drawing(sheet: Sheet) -> Drawing | None:
     start = assessment.fact("stopping_shaft_speed")
     if inertia is None or start is None:
         return None
-    drawing = Drawing(sheet.width, HEIGHT + 28)
+    drawing = Drawing(sheet.width, HEIGHT + 22)
     half = sheet.width / 2.0
     top_energy = 0.5 * inertia.best * start.best**2
     energies = {case: 0.5 * inertia.best * speed**2 for case, speed in speeds.items()}
@@ -80,7 +80,13 @@ def _best_speeds(sheet: Sheet, case: str, times: Samples) -> Samples:
 
 
 def _chart(
-    drawing: Drawing, sheet: Sheet, place: tuple[float, float], times: Samples, curves: dict[str, Samples], top: float, unit: str
+    drawing: Drawing,
+    sheet: Sheet,
+    place: tuple[float, float],
+    times: Samples,
+    curves: dict[str, Samples],
+    top: float,
+    unit: str,
 ) -> None:
     left, width = place[0] + 46, place[1] - 50
     bottom, height = 40.0, HEIGHT - 26.0
@@ -100,7 +106,11 @@ def _chart(
         drawing.add(_text(across(tick), bottom - 11, f"{tick:g} s", "middle"))
     for case, values in curves.items():
         dash, thickness = DASHES[case]
-        points = [coordinate for t, v in zip(times, values, strict=True) for coordinate in (across(float(t)), bottom + height * float(v) / (1.05 * top))]
+        points = [
+            coordinate
+            for t, v in zip(times, values, strict=True)
+            for coordinate in (across(float(t)), bottom + height * float(v) / (1.05 * top))
+        ]
         drawing.add(PolyLine(points, strokeColor=colors.black, strokeWidth=thickness, strokeDashArray=dash))
     _marks(drawing, sheet, across, (left, left + width), (bottom, height))
 
@@ -112,7 +122,9 @@ def _marks(drawing: Drawing, sheet: Sheet, across, sides: tuple[float, float], f
         if fact is None or not fact.known or not math.isfinite(fact.best):
             continue
         x = min(across(fact.best), sides[1])
-        drawing.add(Line(x, bottom, x, bottom + height, strokeColor=RULE, strokeWidth=0.9, strokeDashArray=[3, 1.5, 0.8, 1.5]))
+        drawing.add(
+            Line(x, bottom, x, bottom + height, strokeColor=RULE, strokeWidth=0.9, strokeDashArray=[3, 1.5, 0.8, 1.5])
+        )
         beyond = " →" if across(fact.best) > sides[1] else ""
         drawing.add(_text(x, bottom + height + 3, letter + beyond, "middle" if not beyond else "end"))
 

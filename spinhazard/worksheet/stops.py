@@ -10,7 +10,14 @@ from spinhazard.worksheet.stop_drawing import stop_drawing
 from spinhazard.worksheet.style import BODY, SMALL
 from spinhazard.worksheet.text import paragraph, shares, table
 
-COLUMNS = ("stopping_time", "stopping_turns", "energy_at_access", "brake_heat", "brake_temperature_rise", "brake_rating_use")
+COLUMNS = (
+    "stopping_time",
+    "stopping_turns",
+    "energy_at_access",
+    "brake_heat",
+    "brake_temperature_rise",
+    "brake_rating_use",
+)
 
 
 def stops(sheet: Sheet, number: int) -> list[Flowable]:
@@ -30,7 +37,10 @@ def stops(sheet: Sheet, number: int) -> list[Flowable]:
     """
     file = sheet.assessment.file
     if file.stopping is None:
-        return [*heading(number, "Stops"), paragraph("Nothing is stated about stopping, so no stop was computed.", BODY)]
+        return [
+            *heading(number, "Stops"),
+            paragraph("Nothing is stated about stopping, so no stop was computed.", BODY),
+        ]
     credible = sheet.assessment.policy.credible_stops
     rows = []
     for stop in sheet.assessment.sheet.subjects.stops:
@@ -80,5 +90,8 @@ def _drawing(sheet: Sheet) -> list[Flowable]:
         marks.append(f"A: earliest access, {display(access.best, 's')} into the stop")
     if wait is not None and wait.known:
         marks.append(f"W: stated wait, {display(wait.best, 's')}")
-    caption = "Speed (left) and energy of the drivetrain (right) over the time after the stop command, best estimate. " + "; ".join(marks)
+    caption = (
+        "Speed (left) and energy of the drivetrain (right) over the time after the stop command, best estimate. "
+        + "; ".join(marks)
+    )
     return [KeepTogether([drawing, paragraph(caption.rstrip() + ("." if marks else ""), SMALL)])]

@@ -44,12 +44,13 @@ HEAD_CELL = _style("head cell", fontName=BOLD, fontSize=7.6, leading=9.6)
 HEAD_NUMBER = _style("head number", fontName=BOLD, fontSize=7.6, leading=9.6, alignment=TA_RIGHT)
 TITLE = _style("title", fontName=BOLD, fontSize=15, leading=18, spaceAfter=1)
 SUBTITLE = _style("subtitle", fontSize=10, leading=13, spaceAfter=4)
-SECTION = _style("section", fontName=BOLD, fontSize=11.5, leading=14, spaceBefore=10, spaceAfter=4, keepWithNext=1)
-GROUP = _style("group", fontName=BOLD, fontSize=9, leading=11.5, spaceBefore=6, spaceAfter=2, keepWithNext=1)
+SECTION = _style("section", fontName=BOLD, fontSize=11.5, leading=14, spaceBefore=10, spaceAfter=4)
+GROUP = _style("group", fontName=BOLD, fontSize=9, leading=11.5, spaceBefore=6, spaceAfter=2)
 FIGURE = _style("figure", fontName=BOLD, fontSize=13, leading=15)
 LABEL = _style("label", fontSize=7.2, leading=9)
 
 GRID = [
+    ("FONTNAME", (0, 0), (-1, -1), PLAIN),
     ("VALIGN", (0, 0), (-1, -1), "TOP"),
     ("LINEABOVE", (0, 0), (-1, 0), 0.8, RULE),
     ("LINEBELOW", (0, 0), (-1, 0), 0.6, RULE),

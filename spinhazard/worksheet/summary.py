@@ -2,12 +2,12 @@
 
 from __future__ import annotations
 
-from reportlab.platypus import Flowable, KeepTogether, Table
+from reportlab.platypus import Flowable, Spacer, Table
 
 from spinhazard.facts.fact import Fact
 from spinhazard.rules.rule import OUTCOMES, URGENCIES
 from spinhazard.worksheet.page import Sheet, heading
-from spinhazard.worksheet.style import BODY, FAINT, FIGURE, LABEL, RULE
+from spinhazard.worksheet.style import BODY, FAINT, FIGURE, LABEL, PLAIN, RULE
 from spinhazard.worksheet.text import paragraph, shares, table
 
 MOST_LINES = 14
@@ -28,7 +28,14 @@ def summary(sheet: Sheet, number: int) -> list[Flowable]:
     list of Flowable
         Flowables.
     """
-    return [*heading(number, "Summary"), _figures(sheet), *_urgent(sheet), paragraph(_counts(sheet), BODY)]
+    return [
+        *heading(number, "Summary"),
+        _figures(sheet),
+        Spacer(1, 5),
+        *_urgent(sheet),
+        Spacer(1, 3),
+        paragraph(_counts(sheet), BODY),
+    ]
 
 
 def _figures(sheet: Sheet) -> Table:
@@ -43,7 +50,7 @@ def _figures(sheet: Sheet) -> Table:
     ]
     made = Table([[_figure(sheet, label, fact) for label, fact in boxes]], colWidths=[sheet.width / 4] * 4)
     made.setStyle([
-        ("BOX", (0, 0), (-1, -1), 0.8, RULE), ("INNERGRID", (0, 0), (-1, -1), 0.4, FAINT), ("VALIGN", (0, 0), (-1, -1), "TOP"),
+        ("FONTNAME", (0, 0), (-1, -1), PLAIN), ("BOX", (0, 0), (-1, -1), 0.8, RULE), ("INNERGRID", (0, 0), (-1, -1), 0.4, FAINT), ("VALIGN", (0, 0), (-1, -1), "TOP"),
         ("LEFTPADDING", (0, 0), (-1, -1), 5), ("TOPPADDING", (0, 0), (-1, -1), 4), ("BOTTOMPADDING", (0, 0), (-1, -1), 5),
     ])  # fmt: skip
     return made
@@ -52,7 +59,11 @@ def _figures(sheet: Sheet) -> Table:
 def _figure(sheet: Sheet, label: str, fact: Fact | None) -> list[Flowable]:
     if fact is None or not fact.known:
         needed = ", ".join(fact.missing[:3]) if fact is not None else ""
-        return [paragraph("not known", FIGURE), paragraph(label, LABEL), paragraph(f"needs {needed}" if needed else "", LABEL)]
+        return [
+            paragraph("not known", FIGURE),
+            paragraph(label, LABEL),
+            paragraph(f"needs {needed}" if needed else "", LABEL),
+        ]
     low, high = sheet.assessment.interval(fact)
     whole = sheet.of(fact, interval=True)
     ends = whole.partition(" (")[2].rstrip(")") if low != high else ""
@@ -73,12 +84,15 @@ def _urgent(sheet: Sheet) -> list[Flowable]:
     for finding in found:
         name = "" if finding.subject in {"machine", "lockout"} else finding.subject.partition(":")[2]
         lines.setdefault((finding.rule.urgency, finding.outcome, finding.rule.key), []).append(name)
-    rows = [(urgency, outcome, key, ", ".join(name for name in names if name)) for (urgency, outcome, key), names in lines.items()]
+    rows = [
+        (urgency, outcome, key, ", ".join(name for name in names if name))
+        for (urgency, outcome, key), names in lines.items()
+    ]
     shown = [list(row) for row in rows[:MOST_LINES]]
     if len(rows) > MOST_LINES:
         shown.append(["", "", f"and {len(rows) - MOST_LINES} more, in the section on findings", ""])
     made = table(("urgency", "outcome", "finding", "at"), shown, shares(sheet.width, (20, 13, 34, 33)))
-    return [KeepTogether([paragraph("", BODY), made]) if len(shown) < MOST_LINES else made]
+    return [made]
 
 
 def _counts(sheet: Sheet) -> str:
@@ -86,5 +100,8 @@ def _counts(sheet: Sheet) -> str:
     text = "Findings: " + ", ".join(f"{count} {outcome}" for outcome, count in counts.items()) + ". "
     if sheet.assessment.draws:
         share = f"{100 * sheet.assessment.policy.coverage:g} %"
-        return text + f"Figures under a value are the ends of its {share} interval ({sheet.assessment.draws} draws from the stated spreads)."
+        return (
+            text
+            + f"Figures under a value are the ends of its {share} interval ({sheet.assessment.draws} draws from the stated spreads)."
+        )
     return text + "Best estimate only; the stated spreads were left out."

@@ -4,11 +4,12 @@ from __future__ import annotations
 
 from collections.abc import Sequence
 from functools import lru_cache
+from typing import Any, TypeAlias
 from xml.sax.saxutils import escape
 
 from reportlab.lib.styles import ParagraphStyle
 from reportlab.pdfbase import pdfmetrics
-from reportlab.platypus import Flowable, Paragraph, Table
+from reportlab.platypus import Paragraph, Table
 
 from spinhazard.worksheet.style import CELL, GRID, HEAD_CELL, HEAD_NUMBER, NUMBER, PLAIN
 
@@ -72,10 +73,12 @@ def paragraph(text: object, style: ParagraphStyle = CELL) -> Paragraph:
     return Paragraph(plain(text), style)
 
 
-Cell = str | Flowable | list[Flowable]
+Cell: TypeAlias = Any  # text, taken literally, or flowables (reportlab has no types)
 
 
-def table(heads: Sequence[str], rows: Sequence[Sequence[Cell]], widths: Sequence[float], *, numbers: Sequence[int] = ()) -> Table:
+def table(
+    heads: Sequence[str], rows: Sequence[Sequence[Cell]], widths: Sequence[float], *, numbers: Sequence[int] = ()
+) -> Table:
     """A table that breaks over pages and repeats its head.
 
     Parameters
@@ -96,10 +99,13 @@ def table(heads: Sequence[str], rows: Sequence[Sequence[Cell]], widths: Sequence
     """
     top = [paragraph(head, HEAD_NUMBER if index in numbers else HEAD_CELL) for index, head in enumerate(heads)]
     body = [
-        [paragraph(cell, NUMBER if index in numbers else CELL) if isinstance(cell, str) else cell for index, cell in enumerate(row)]
+        [
+            paragraph(cell, NUMBER if index in numbers else CELL) if isinstance(cell, str) else cell
+            for index, cell in enumerate(row)
+        ]
         for row in rows
     ]
-    made = Table([top, *body], colWidths=list(widths), repeatRows=1, splitInRow=1)
+    made = Table([top, *body], colWidths=list(widths), repeatRows=1, splitInRow=1, spaceAfter=4)
     made.setStyle(GRID)
     return made
 
