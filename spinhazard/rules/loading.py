@@ -24,6 +24,11 @@ __all__ = ["KIND_OF_UNIT", "PLACEHOLDER", "Catalogue", "catalogue_of", "load_rul
 NEEDED = ("key", "since", "asks", "because", "each", "review", "urgency", "says", "basis")
 TAKEN = (*NEEDED, "applies", "measures", "example", "withdrawn", "withdrawn_because")
 TEXTS = ("key", "since", "asks", "because", "each", "urgency", "says", "withdrawn", "withdrawn_because")
+LISTS: dict[str, tuple[type, str]] = {
+    "measures": (str, "not a list of texts"),
+    "basis": (str, "not a list of texts"),
+    "example": (dict, "examples are not written as [[rule.example]] tables"),
+}
 PLACEHOLDER = re.compile(r"\{([a-z_.]+)\}")
 
 
@@ -204,22 +209,32 @@ def _refuse_unfit_fields(entry: dict[str, Any]) -> None:
             )
         if field in TEXTS and not (isinstance(value, str) and value.strip()):
             raise RuleFault(field, "not a text", stated=value)
-        if field in {"measures", "basis"} and not (
-            isinstance(value, list) and all(isinstance(item, str) for item in value)
-        ):
-            raise RuleFault(field, "not a list of texts", stated=value)
-        if field == "example" and not (isinstance(value, list) and all(isinstance(item, dict) for item in value)):
-            raise RuleFault(field, "examples are not written as [[rule.example]] tables", stated=value)
-    for field in NEEDED:
+        if field in LISTS and not _is_list_of(LISTS[field][0], value):
+            raise RuleFault(field, LISTS[field][1], stated=value)
+    for field in (*NEEDED, *(("withdrawn_because",) if "withdrawn" in entry else ())):
         if field not in entry:
             raise RuleFault(field, "this field is needed and is not stated")
-    if "withdrawn" in entry and "withdrawn_because" not in entry:
-        raise RuleFault("withdrawn_because", "a rule that was withdrawn says why")
+
+
+def _is_list_of(kind: type, value: object) -> bool:
+    return isinstance(value, list) and all(isinstance(item, kind) for item in value)
 
 
 def _refuse_unknown_names(rule: Rule) -> None:
     if not rule.review:
         raise RuleFault("review", "nothing is compared")
+    _refuse_unknown_sources(rule)
+    _refuse_unknown_placeholders(rule)
+    for lever in rule.measures:
+        if not is_lever(lever):
+            raise RuleFault(
+                "measures", "no such field in an assessment file", stated=lever, nearest=nearest_lever(lever)
+            )
+    for name in (name for example in rule.examples for name in example.given):
+        reachable("example.given", name, rule.each)
+
+
+def _refuse_unknown_sources(rule: Rule) -> None:
     if not rule.basis:
         raise RuleFault("basis", "a rule needs a basis")
     for reference in rule.basis:
@@ -227,11 +242,9 @@ def _refuse_unknown_names(rule: Rule) -> None:
             resolve(reference)
         except LookupError as error:
             raise RuleFault("basis", str(error.args[0]).rstrip("."), stated=reference) from None
-    for lever in rule.measures:
-        if not is_lever(lever):
-            raise RuleFault(
-                "measures", "no such field in an assessment file", stated=lever, nearest=nearest_lever(lever)
-            )
+
+
+def _refuse_unknown_placeholders(rule: Rule) -> None:
     for placeholder in PLACEHOLDER.findall(rule.says):
         if placeholder.startswith("policy."):
             policy_kind("says", placeholder)
@@ -241,9 +254,6 @@ def _refuse_unknown_names(rule: Rule) -> None:
         raise RuleFault(
             "says", "a brace that is no placeholder", stated=rule.says, accepted="{fact_key} or {policy.name}"
         )
-    for example in rule.examples:
-        for name in example.given:
-            reachable("example.given", name, rule.each)
 
 
 def _example(entry: dict[str, Any]) -> Example:

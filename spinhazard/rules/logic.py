@@ -55,7 +55,7 @@ def exceeds(left: NDArray[np.float64], right: NDArray[np.float64]) -> Truth:
     ndarray, shape (n,) or (1,)
         YES or NO; UNKNOWN where a side is not a number, as never over never.
     """
-    with np.errstate(invalid="ignore"):
+    with np.errstate(invalid="ignore", over="ignore"):
         greater = left > right + np.where(np.isfinite(right), np.abs(right), 0.0) * _RELATIVE_WIDTH_OF_A_LIMIT
     return np.where(np.isnan(left) | np.isnan(right), UNKNOWN, np.where(greater, YES, NO)).astype(np.int8)
 

@@ -21,7 +21,8 @@ UNITS = {
          "tangential"), "m",
     ),
     "mass": "kg", "inertia": "kg m²", "gd2": "kg m²", "wk2": "kg m²", "time": "s", "torque": "N m", "energy": "J", "heat": "J",
-    "power": "W", "volume": "m³", "density": "kg/m³", "angle": "rad", "constant": "N m", "linear": "N m s", "quadratic": "N m s²", "stress": "Pa",
+    "power": "W", "volume": "m³", "density": "kg/m³", "angle": "rad", "constant": "N m",
+    "linear": "N m s", "quadratic": "N m s²", "stress": "Pa",
     "strength": "Pa", "area": "m²", "unbalance": "kg m", "specific_heat": "J/(kg K)",
 }  # fmt: skip
 """SI unit of an argument by the last word of its name; speeds depend on the formula."""

@@ -6,7 +6,7 @@ from reportlab.platypus import Flowable, Table
 
 from spinhazard.assessment import CAUTIONS
 from spinhazard.worksheet.page import Sheet
-from spinhazard.worksheet.style import BODY, BOLD, CELL, FAINT, LABEL, PLAIN, RULE, SMALL, SUBTITLE, TITLE
+from spinhazard.worksheet.style import BODY, BOLD, CAUTION_BOX, CELL, IDENTITY, LABEL, SMALL, SUBTITLE, TITLE
 from spinhazard.worksheet.text import paragraph, shares
 
 
@@ -39,10 +39,7 @@ def identity(sheet: Sheet) -> list[Flowable]:
         for i in range(half)
     ]
     block = Table(rows, colWidths=shares(sheet.width, (13, 37, 13, 37)))
-    block.setStyle([
-        ("FONTNAME", (0, 0), (-1, -1), PLAIN), ("VALIGN", (0, 0), (-1, -1), "TOP"), ("LINEBELOW", (0, 0), (-1, -1), 0.25, FAINT), ("LINEABOVE", (0, 0), (-1, 0), 0.8, RULE),
-        ("LEFTPADDING", (0, 0), (-1, -1), 0), ("TOPPADDING", (0, 0), (-1, -1), 1.5), ("BOTTOMPADDING", (0, 0), (-1, -1), 1.5),
-    ])  # fmt: skip
+    block.setStyle(IDENTITY)
     return [
         paragraph(f"{machine.tag}  {machine.name}".rstrip(), TITLE),
         paragraph("Worksheet on stored rotational energy, stopping, access and lockout", SUBTITLE),
@@ -57,8 +54,5 @@ def _cautions(sheet: Sheet) -> Table:
         *([paragraph(text, SMALL)] for text in CAUTIONS),
     ]
     box = Table(lines, colWidths=[sheet.width], spaceBefore=6, spaceAfter=4)
-    box.setStyle([
-        ("FONTNAME", (0, 0), (-1, -1), PLAIN), ("BOX", (0, 0), (-1, -1), 1.0, RULE), ("LEFTPADDING", (0, 0), (-1, -1), 6), ("TOPPADDING", (0, 0), (-1, -1), 1),
-        ("BOTTOMPADDING", (0, 0), (-1, -1), 1), ("BOTTOMPADDING", (0, -1), (-1, -1), 4), ("TOPPADDING", (0, 0), (-1, 0), 3),
-    ])  # fmt: skip
+    box.setStyle(CAUTION_BOX)
     return box

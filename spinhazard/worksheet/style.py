@@ -6,6 +6,7 @@ from functools import lru_cache
 from importlib import resources
 from typing import Any
 
+from reportlab.graphics.shapes import STATE_DEFAULTS
 from reportlab.lib import colors
 from reportlab.lib.enums import TA_RIGHT
 from reportlab.lib.styles import ParagraphStyle
@@ -28,6 +29,7 @@ def register_fonts() -> None:
     for name in (PLAIN, BOLD):
         with resources.as_file(folder.joinpath(f"{name}.ttf")) as path:
             pdfmetrics.registerFont(TTFont(name, str(path)))
+    STATE_DEFAULTS["fontName"] = PLAIN  # else every drawing would name a font that is not embedded
     pdfmetrics.registerFontFamily(PLAIN, normal=PLAIN, bold=BOLD, italic=PLAIN, boldItalic=BOLD)
 
 
@@ -62,3 +64,31 @@ GRID = [
     ("BOTTOMPADDING", (0, 0), (-1, -1), 2),
 ]
 """Commands of every table: a strong rule round the head, faint ones between rows, no colour that carries meaning."""
+
+IDENTITY = [
+    ("FONTNAME", (0, 0), (-1, -1), PLAIN),
+    ("VALIGN", (0, 0), (-1, -1), "TOP"),
+    ("LINEABOVE", (0, 0), (-1, 0), 0.8, RULE),
+    ("LINEBELOW", (0, 0), (-1, -1), 0.25, FAINT),
+    ("LEFTPADDING", (0, 0), (-1, -1), 0),
+    ("TOPPADDING", (0, 0), (-1, -1), 1.5),
+    ("BOTTOMPADDING", (0, 0), (-1, -1), 1.5),
+]
+CAUTION_BOX = [
+    ("FONTNAME", (0, 0), (-1, -1), PLAIN),
+    ("BOX", (0, 0), (-1, -1), 1.0, RULE),
+    ("LEFTPADDING", (0, 0), (-1, -1), 6),
+    ("TOPPADDING", (0, 0), (-1, -1), 1),
+    ("TOPPADDING", (0, 0), (-1, 0), 3),
+    ("BOTTOMPADDING", (0, 0), (-1, -1), 1),
+    ("BOTTOMPADDING", (0, -1), (-1, -1), 4),
+]
+FIGURE_BOX = [
+    ("FONTNAME", (0, 0), (-1, -1), PLAIN),
+    ("BOX", (0, 0), (-1, -1), 0.8, RULE),
+    ("INNERGRID", (0, 0), (-1, -1), 0.4, FAINT),
+    ("VALIGN", (0, 0), (-1, -1), "TOP"),
+    ("LEFTPADDING", (0, 0), (-1, -1), 5),
+    ("TOPPADDING", (0, 0), (-1, -1), 4),
+    ("BOTTOMPADDING", (0, 0), (-1, -1), 5),
+]

@@ -7,7 +7,7 @@ from reportlab.platypus import Flowable, Spacer, Table
 from spinhazard.facts.fact import Fact
 from spinhazard.rules.rule import OUTCOMES, URGENCIES
 from spinhazard.worksheet.page import Sheet, heading
-from spinhazard.worksheet.style import BODY, FAINT, FIGURE, LABEL, PLAIN, RULE
+from spinhazard.worksheet.style import BODY, FIGURE, FIGURE_BOX, LABEL
 from spinhazard.worksheet.text import paragraph, shares, table
 
 MOST_LINES = 14
@@ -49,10 +49,7 @@ def _figures(sheet: Sheet) -> Table:
         ("wait that covers it, with margin", assessment.fact("required_wait", "lockout")),
     ]
     made = Table([[_figure(sheet, label, fact) for label, fact in boxes]], colWidths=[sheet.width / 4] * 4)
-    made.setStyle([
-        ("FONTNAME", (0, 0), (-1, -1), PLAIN), ("BOX", (0, 0), (-1, -1), 0.8, RULE), ("INNERGRID", (0, 0), (-1, -1), 0.4, FAINT), ("VALIGN", (0, 0), (-1, -1), "TOP"),
-        ("LEFTPADDING", (0, 0), (-1, -1), 5), ("TOPPADDING", (0, 0), (-1, -1), 4), ("BOTTOMPADDING", (0, 0), (-1, -1), 5),
-    ])  # fmt: skip
+    made.setStyle(FIGURE_BOX)
     return made
 
 

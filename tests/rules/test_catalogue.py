@@ -28,18 +28,20 @@ FAMILIES = (
 POLICY = Policy()
 FORBIDDEN = re.compile(r"\b(safe|pass|approved|compliant|ok)\b", re.IGNORECASE)
 NUMERIC = {"exceeds", "is below"}
-AGREED = """
-energy-above-review-level energy-growth-at-max-speed max-speed-not-stated energy-rests-on-estimates
-coupled-inertia-not-stated inertia-impossible density-impossible tip-speed-implausible tip-speed-above-guide
-above-marked-speed burst-margin-low rim-stress-high never-reaches-standstill stop-slower-than-kind brake-lost-with-power
-brake-overloaded few-stop-measurements measured-and-computed-disagree measurement-out-of-date drag-from-estimates
-part-without-guard opens-before-standstill lock-timer-too-short timer-where-stop-varies energy-left-at-access
-curtain-too-close two-hand-too-close opening-too-large fan-opening-over-half-inch low-flywheel-unguarded
-rail-distance-off fixed-guard-opens-by-hand work-rest-gap tongue-gap hood-angle guard-thinner-than-perforation
-hazardous-fragment-unenclosed guard-material-without-method method-out-of-range unbalance-after-loss
-wait-shorter-than-stop wait-not-stated standstill-not-verified back-drive-not-blocked swings-back
-procedure-review-overdue value-without-source instrument-out-of-calibration reassessment-due
-""".split()
+AGREED = [
+    "energy-above-review-level", "energy-growth-at-max-speed", "max-speed-not-stated", "energy-rests-on-estimates",
+    "coupled-inertia-not-stated", "inertia-impossible", "density-impossible", "tip-speed-implausible",
+    "tip-speed-above-guide", "above-marked-speed", "burst-margin-low", "rim-stress-high", "never-reaches-standstill",
+    "stop-slower-than-kind", "brake-lost-with-power", "brake-overloaded", "few-stop-measurements",
+    "measured-and-computed-disagree", "measurement-out-of-date", "drag-from-estimates", "part-without-guard",
+    "opens-before-standstill", "lock-timer-too-short", "timer-where-stop-varies", "energy-left-at-access",
+    "curtain-too-close", "two-hand-too-close", "opening-too-large", "fan-opening-over-half-inch",
+    "low-flywheel-unguarded", "rail-distance-off", "fixed-guard-opens-by-hand", "work-rest-gap", "tongue-gap",
+    "hood-angle", "guard-thinner-than-perforation", "hazardous-fragment-unenclosed", "guard-material-without-method",
+    "method-out-of-range", "unbalance-after-loss", "wait-shorter-than-stop", "wait-not-stated",
+    "standstill-not-verified", "back-drive-not-blocked", "swings-back", "procedure-review-overdue",
+    "value-without-source", "instrument-out-of-calibration", "reassessment-due",
+]  # fmt: skip
 """Conditions that the catalogue owes; a rule may be withdrawn, what it asked may not be lost."""
 
 

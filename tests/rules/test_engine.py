@@ -12,6 +12,7 @@ from spinhazard.sampling import Sampler
 from spinhazard.statement.policy import Policy
 
 POLICY = Policy()
+YES, NO = True, False
 HEAD = """
 [[rule]]
 key = "made-up"
@@ -278,8 +279,8 @@ def test_words_are_compared_as_words(body, value, outcome, says):
 def test_yes_and_no_are_told_as_such():
     rule = rule_of('review = [["guard_contains", "is", false]]', says="It is.")
 
-    assert judged(rule, word("guard_contains", False)).outcome == "for review"
-    assert judged(rule, word("guard_contains", True)).says == (
+    assert judged(rule, word("guard_contains", NO)).outcome == "for review"
+    assert judged(rule, word("guard_contains", YES)).says == (
         "Not met: whether the guard is meant to hold what could come off: yes."
     )
 
@@ -292,7 +293,9 @@ def test_several_causes_are_one_word_with_commas():
 
 def test_a_setting_of_the_policy_is_the_limit_and_is_told_as_written():
     rule = rule_of(
-        'review = [["stored_energy", "exceeds", "policy.energy_review_level"]]', each="machine", says="Level {policy.energy_review_level}."
+        'review = [["stored_energy", "exceeds", "policy.energy_review_level"]]',
+        each="machine",
+        says="Level {policy.energy_review_level}.",
     )
     site = Policy(energy_review_level="0.5 kJ")
 
@@ -320,7 +323,7 @@ def test_a_fact_as_the_limit_is_told_with_its_value():
         (number("power_loss_ratio", np.inf, unit=""), "without limit"),
         (number("governing_stopping_time", np.inf, unit="s"), "never"),
         (word("guard_kind", "rail"), "rail"),
-        (word("is_guarded", True), "yes"),
+        (word("is_guarded", YES), "yes"),
     ],
 )
 def test_facts_are_shown_as_a_person_reads_them(fact, text):
@@ -332,7 +335,7 @@ def sheet_of(text):
 
 
 def test_every_rule_is_asked_for_every_subject_of_its_kind(fan):
-    sheet = sheet_of(fan)
+    sheet = sheet_of(fan.replace("procedure_reviewed = 2026-01-12\n", ""))
     rules = shipped_catalogue().rules
 
     with np.errstate(all="ignore"):

@@ -26,7 +26,7 @@ def loaded(text):
 
 
 def refused(text):
-    with pytest.raises(CatalogueError, match="site.toml") as caught:
+    with pytest.raises(CatalogueError, match=r"site\.toml") as caught:
         loaded(text)
     return str(caught.value)
 
@@ -47,11 +47,9 @@ REPLACED = [
     ("fact that is no text", '["stated_wait", "is below"', '[3, "is below"',
      "site.toml, line 2, wait-very-short.review: no such fact. Stated: 3."),
     ("unknown comparison word", '"is below"', '"is under"',
-     'wait-very-short.review: not a word known here. Stated: "is under". Accepted: exceeds, is below, is, is not, '
-     "is one of, is stated. Nearest: is below."),
+     'Stated: "is under". Accepted: exceeds, is below, is, is not, is one of, is stated. Nearest: is one of.'),
     ("unknown kind of subject", '"lockout"', '"locks"',
-     'wait-very-short.each: not a word known here. Stated: "locks". Accepted: machine, shaft, part, stop, guard, lockout. '
-     "Nearest: lockout."),
+     'Stated: "locks". Accepted: machine, shaft, part, stop, guard, lockout. Nearest: lockout.'),
     ("unknown urgency", '"before next access"', '"at once"', 'wait-very-short.urgency: not a word known here. Stated: "at once".'),
     ("unknown source", '["practice"]', '["iso-14120 5", "practise"]',
      'wait-very-short.basis: no source has the id "practise"; the nearest is "practice". Stated: "practise".'),
@@ -93,10 +91,11 @@ REPLACED = [
     ("too long a condition", '["stated_wait", "is below", "required_wait"]', '["stated_wait", "is below", "1 s", "2 s"]',
      "wait-very-short.review: not a condition."),
     ("condition as text", '["stated_wait", "is below", "required_wait"]', '"stated_wait is below 3 s"',
-     "wait-very-short.review: not a condition. Stated: \"stated_wait is below 3 s\". Accepted: [fact, word, value] or { any = [...] }."),
-    ("alternatives under another name", '["stated_wait", "is below", "required_wait"]', '{ either = [["stated_wait", "is stated"]] }',
+     'not a condition. Stated: "stated_wait is below 3 s". Accepted: [fact, word, value] or { any = [...] }.'),
+    ("alternatives under another name", '["stated_wait", "is below", "required_wait"]', "{ either = [] }",
      "wait-very-short.review: not a condition."),
-    ("alternatives without any", '["stated_wait", "is below", "required_wait"]', "{ any = [] }", "wait-very-short.review: not a condition."),
+    ("alternatives without any", '["stated_wait", "is below", "required_wait"]', "{ any = [] }",
+     "wait-very-short.review: not a condition."),
     ("no condition at all", '[["stated_wait", "is below", "required_wait"]]', "[]", "wait-very-short.review: nothing is compared."),
     ("conditions that are no list", '[["stated_wait", "is below", "required_wait"]]', '"always"',
      'wait-very-short.review: not a list of conditions. Stated: "always".'),
@@ -106,18 +105,20 @@ REPLACED = [
      'wait-very-short.says: a fact of each guard cannot be asked for each lockout. Stated: "lock_timer".'),
     ("placeholder of no setting", "{policy.wait_margin}", "{policy.margin}", "wait-very-short.says: no such number in the policy."),
     ("brace that is no placeholder", "{stated_wait}", "{stated wait}", "wait-very-short.says: a brace that is no placeholder."),
-    ("remedy for a key", '"wait-very-short"', '"no-wait"', 'line 2, no-wait.key: a key names the condition found, in lower case'),
+    ("remedy for a key", '"wait-very-short"', '"no-wait"', "line 2, no-wait.key: a key names the condition found, in lower case"),
     ("key in capitals", '"wait-very-short"', '"Wait-Short"', "Wait-Short.key: a key names the condition found"),
     ("key that is no text", '"wait-very-short"', "7", "line 2, rule 1.key: not a text. Stated: 7."),
     ("empty question", '"Is the wait very short?"', '" "', 'wait-very-short.asks: not a text. Stated: " ".'),
     ("unknown field", 'since   = "0.1.0"', 'since = "0.1.0"\nseverity = "high"', "wait-very-short.severity: no such field in a rule."),
     ("field left out", 'since   = "0.1.0"\n', "", "wait-very-short.since: this field is needed and is not stated."),
     ("withdrawn without reason", 'since   = "0.1.0"', 'since = "0.1.0"\nwithdrawn = "0.2.0"',
-     "wait-very-short.withdrawn_because: a rule that was withdrawn says why."),
+     "wait-very-short.withdrawn_because: this field is needed and is not stated."),
 ]  # fmt: skip
 
 
-@pytest.mark.parametrize(("before", "after", "message"), [case[1:] for case in REPLACED], ids=[case[0] for case in REPLACED])
+@pytest.mark.parametrize(
+    ("before", "after", "message"), [case[1:] for case in REPLACED], ids=[case[0] for case in REPLACED]
+)
 def test_the_loader_refuses(before, after, message):
     assert RULE.count(before) == 1
 
@@ -174,7 +175,9 @@ def test_every_wrong_rule_of_a_file_is_told_with_its_own_line():
 
 
 def test_a_key_used_twice_in_a_file_is_refused_with_the_line_of_the_second():
-    with pytest.raises(CatalogueError, match=r'site\.toml, line 13, key: another rule has this key\. Stated: "wait-very-short"'):
+    with pytest.raises(
+        CatalogueError, match=r'site\.toml, line 13, key: another rule has this key\. Stated: "wait-very-short"'
+    ):
         catalogue_of([("site.toml", RULE + RULE)])
 
 
@@ -186,7 +189,10 @@ def test_a_key_used_in_two_files_is_refused_with_the_second_file():
 def test_rules_of_several_files_keep_their_order_and_families():
     catalogue = catalogue_of([("b.toml", RULE), ("a.toml", RULE.replace("wait-very-short", "wait-even-shorter"))])
 
-    assert [(rule.family, rule.key) for rule in catalogue.rules] == [("b", "wait-very-short"), ("a", "wait-even-shorter")]
+    assert [(rule.family, rule.key) for rule in catalogue.rules] == [
+        ("b", "wait-very-short"),
+        ("a", "wait-even-shorter"),
+    ]
     assert catalogue.rule("wait-even-shorter").family == "a"
 
 
@@ -199,7 +205,9 @@ def test_the_digest_changes_with_a_single_letter():
 
 
 def test_an_unknown_key_is_answered_with_the_nearest():
-    with pytest.raises(CatalogueError, match=r'no rule has this key\. Stated: "wait-shorter".*Nearest: wait-shorter-than-stop'):
+    with pytest.raises(
+        CatalogueError, match=r'no rule has this key\. Stated: "wait-shorter".*Nearest: wait-shorter-than-stop'
+    ):
         shipped_catalogue().rule("wait-shorter")
 
 
@@ -209,7 +217,9 @@ def test_a_key_like_no_other_is_answered_without_a_guess():
 
 
 def test_a_withdrawn_rule_keeps_its_reason():
-    (rule,) = loaded(RULE.replace('since   = "0.1.0"', 'since = "0.1.0"\nwithdrawn = "0.4.0"\nwithdrawn_because = "Merged."'))
+    (rule,) = loaded(
+        RULE.replace('since   = "0.1.0"', 'since = "0.1.0"\nwithdrawn = "0.4.0"\nwithdrawn_because = "Merged."')
+    )
 
     assert (rule.withdrawn, rule.withdrawn_because) == ("0.4.0", "Merged.")
 
@@ -234,7 +244,13 @@ def test_alternatives_words_and_yes_and_no_are_read():
 
 
 def test_levers_are_the_fields_of_the_assessment_file():
-    for path in ("guard.distance", "shaft.part.diameter", "stopping.brake.torque", "guard.opening.size", "lockout.wait"):
+    for path in (
+        "guard.distance",
+        "shaft.part.diameter",
+        "stopping.brake.torque",
+        "guard.opening.size",
+        "lockout.wait",
+    ):
         assert is_lever(path)
     for path in ("guard.colour", "guard", "part.mass", "shaft.parts.mass", ""):
         assert not is_lever(path) or path == "guard"
