@@ -6,6 +6,7 @@ arithmetic, and the stops are integrals of J dω/T and J ω dω/T.
 
 import math
 import re
+import tomllib
 from pathlib import Path
 from typing import get_args
 
@@ -13,7 +14,11 @@ import pytest
 from scipy.integrate import quad
 from scipy.optimize import brentq
 
-from spinhazard import assess, assessment_from_text, read_assessment, read_policy
+from spinhazard import InputError, Policy, assess, assessment_from_text, read_assessment, read_policy
+from spinhazard.quantity.notation import parse_stated
+from spinhazard.quantity.stated import SOURCE_WORDS
+from spinhazard.quantity.units import ANGULAR_SPEED, KINDS, UNIT_NAMES
+from spinhazard.rules.loading import shipped_catalogue
 from spinhazard.statement.machine import MachineKind
 
 EXAMPLES = Path(__file__).parents[1] / "examples"
@@ -562,3 +567,72 @@ def test_the_stops_stated_in_a_starter_agree_with_its_drag(kind):
     ratio = assess(assessment_from_text(text, name=f"{kind}.toml"), best_estimate=True).fact("measured_over_computed")
 
     assert ratio.best == pytest.approx(1.0, abs=0.1)
+
+
+HOW_TO = (Path(__file__).parents[1] / "docs" / "how-to.md").read_text("utf-8")
+
+
+def unit_rows():
+    section = HOW_TO.split("## 11. Units")[1].split("## 12.")[0]
+    for kind, accepted, written_as in re.findall(
+        r"^\| ([a-z0-9 ]+) \| ([^|]*`[^|]*) \| ([^|]+) \|$", section, re.MULTILINE
+    ):
+        yield kind, re.findall(r"`([^`]+)`", accepted), re.findall(r'`"?([^"`]+)"?`', written_as)
+
+
+def test_the_how_to_lists_units_that_are_read_and_every_kind_a_field_can_have():
+    rows = {kind: units + amounts for kind, units, amounts in unit_rows()}
+
+    for kind, units, amounts in unit_rows():
+        for unit in units:
+            assert parse_stated(f"2 {unit}", kind).value > 0.0, unit
+        for amount in amounts:
+            assert parse_stated(amount, kind).value > 0.0, amount
+    assert set(rows) == set(KINDS) - {"area", "temperature"}
+
+
+def test_the_how_to_names_every_single_unit_that_is_accepted():
+    named = " ".join(f"`{unit}`" for _, units, _ in unit_rows() for unit in units)
+    atoms = set(re.findall(r"[A-Za-zµμ°\"]+", named))
+
+    assert set(UNIT_NAMES) - atoms - {"μm", "l"} == set()
+    assert {unit for unit in ANGULAR_SPEED if f"`{unit}`" not in named} == set()
+
+
+def test_the_message_in_the_how_to_is_what_the_program_says():
+    lines = [
+        "format = 1",
+        "[machine]",
+        'tag = "DX-12"',
+        *[""] * 6,
+        "[[shaft]]",
+        'id = "spindle"',
+        'speed = "1,480 rpm"',
+    ]
+    text = "\n".join([*lines, "[[shaft.part]]", 'shape = "point"', 'radius = "1 m"', 'mass = "1 kg"'])
+
+    with pytest.raises(InputError, match="a comma between digits is not read") as refusal:
+        assessment_from_text(text, name="dx-12.toml")
+
+    assert f"```\n{refusal.value}\n```" in HOW_TO
+
+
+def test_every_command_in_the_how_to_names_files_and_rules_that_exist():
+    keys = set(re.findall(r"^spinhazard rules ([a-z-]+)", HOW_TO, re.MULTILINE))
+
+    assert keys
+    assert all(shipped_catalogue().rule(key) for key in keys)
+    policy = HOW_TO.split("## 9.")[1].split("```toml\n")[1].split("```")[0]
+    assert Policy.model_validate(tomllib.loads(policy)).figures == "us"
+
+
+def test_the_sources_and_default_spreads_in_the_how_to_are_those_of_the_program():
+    shipped = Policy().spreads
+    rows = re.findall(
+        r"^\| (measured|nameplate|drawing|calculated|estimated) \| ([^|]+) \| ± (\d+) % \|$", HOW_TO, re.MULTILINE
+    )
+
+    assert {word: kind for kind, words, _ in rows for word in words.split(", ")} == SOURCE_WORDS
+    assert {kind: float(share) / 100 for kind, _, share in rows} == {
+        kind: getattr(shipped, kind) for kind, _, _ in rows
+    }

@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import math
 from dataclasses import dataclass
 
 import numpy as np
@@ -106,6 +107,11 @@ class _Threat:
     energy: Samples
 
 
+def _or_infinite(energy: float) -> float:
+    """An energy that is not known may be the largest."""
+    return math.inf if math.isnan(energy) else energy
+
+
 def _threat(sheet: FactSheet, guard: Subject) -> _Threat | None:
     threats = []
     for name in guard.entity.covers:
@@ -113,7 +119,7 @@ def _threat(sheet: FactSheet, guard: Subject) -> _Threat | None:
             energy = sheet.where_applies("part_fragment_energy", part)
             if energy is not None:
                 threats.append(_Threat(part, energy))
-    return max(threats, key=lambda threat: float(np.nan_to_num(threat.energy[0], nan=np.inf))) if threats else None
+    return max(threats, key=lambda threat: _or_infinite(float(threat.energy[0]))) if threats else None
 
 
 @fact(per="guard", word=True)
@@ -220,20 +226,34 @@ def perforation_ratio(sheet: FactSheet, guard: Subject) -> Samples | None:
 
 @fact(per="guard", word=True)
 def guard_contains(sheet: FactSheet, guard: Subject) -> Word | None:
-    """Whether the guard is meant to hold what could come off."""
-    return sheet.word(guard, "contains") if guard.entity.kind in SOLID else False
+    """Whether the guard is meant to hold what could come off.
+
+    Where it does not say so itself: no, if every shaft it covers has another guard that is; else it has to be stated.
+    """
+    if guard.entity.kind not in SOLID:
+        return False
+    if guard.entity.contains is None and all(_holds(sheet, shaft) for shaft in guard.entity.covers):
+        return False
+    return sheet.word(guard, "contains")
+
+
+def _holds(sheet: FactSheet, shaft: str) -> bool:
+    """Whether a guard of the shaft is stated to hold what could come off."""
+    return any(guard.entity.contains and guard.entity.kind in SOLID for guard in _guards_of(sheet, shaft))
+
+
+def _guards_of(sheet: FactSheet, shaft: str) -> list[Subject]:
+    return [guard for guard in sheet.subjects.guards if shaft in guard.entity.covers]
 
 
 @fact(per="shaft", word=True)
 def is_contained(sheet: FactSheet, shaft: Subject) -> Word | None:
     """Whether a guard of the shaft is meant to hold what could come off."""
-    solid = [
-        guard
-        for guard in sheet.subjects.guards
-        if shaft.entity.id in guard.entity.covers and guard.entity.kind in SOLID
-    ]
-    if any(guard.entity.contains for guard in solid):
+    if _holds(sheet, shaft.entity.id):
         return True
-    for guard in solid:
-        sheet.word(guard, "contains")
-    return None if any(guard.entity.contains is None for guard in solid) else False
+    silent = [
+        f"{guard.path}.contains" for guard in _guards_of(sheet, shaft.entity.id)
+        if guard.entity.kind in SOLID and guard.entity.contains is None
+    ]  # fmt: skip
+    sheet.missing(*silent)
+    return None if silent else False

@@ -9,7 +9,7 @@ from spinhazard.facts.fact import Word, fact
 from spinhazard.facts.sheet import FactSheet
 from spinhazard.facts.stopping import computed_time
 from spinhazard.facts.subject import Subject
-from spinhazard.sampling import Samples, largest
+from spinhazard.sampling import Samples, interval, largest
 
 ENOUGH_FOR_A_SPREAD = 5
 SECONDS_PER_DAY = 86400.0
@@ -69,11 +69,16 @@ def measured_over_computed(sheet: FactSheet, _machine: Subject) -> Samples | Non
     return measured / computed_time(sheet, case.value)
 
 
-@fact(per="machine", symbol="t/t_meas", equation="t / t_meas", source="jcgm-100 4.3.1")
-def computed_over_measured(sheet: FactSheet, _machine: Subject) -> Samples | None:
-    """Computed stopping time over the measured one of the same stop case."""
+@fact(per="machine", symbol="d", equation="d = max(low end of t_meas/t, 1 / its high end, 1)", source="jcgm-100 4.3.1")
+def stop_departure(sheet: FactSheet, _machine: Subject) -> Samples | None:
+    """Factor by which measured and computed stop differ at least, whatever the values are within their spreads."""
     ratio = sheet.where_applies("measured_over_computed")
-    return None if ratio is None else 1.0 / ratio
+    if ratio is None or np.isnan(ratio[0]):
+        return ratio
+    # a wide spread must not make the two contradict each other: the interval's end nearest to agreement counts
+    low, high = interval(ratio, sheet.rules.coverage)
+    sheet.note("policy.coverage")
+    return np.array([max(low, 1.0 / high if high > 0.0 else np.inf, 1.0)])
 
 
 @fact(

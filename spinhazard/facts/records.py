@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from collections.abc import Iterator
+from functools import lru_cache
 
 import numpy as np
 
@@ -13,6 +14,12 @@ from spinhazard.quantity.stated import Stated
 from spinhazard.sampling import Samples
 from spinhazard.statement.fields import Model
 from spinhazard.statement.machine import AssessmentFile
+
+
+@lru_cache(maxsize=64)
+def _keys_of(model: type[Model]) -> tuple[tuple[str, str], ...]:
+    """Attributes of a model and the keys they have in a file."""
+    return tuple((name, info.alias or name) for name, info in model.model_fields.items())
 
 
 def stated_values(model: Model, prefix: str = "") -> Iterator[tuple[str, Stated]]:
@@ -30,9 +37,9 @@ def stated_values(model: Model, prefix: str = "") -> Iterator[tuple[str, Stated]
     (str, Stated)
         Path and value.
     """
-    for name, info in type(model).model_fields.items():
+    for name, key in _keys_of(type(model)):
         found = getattr(model, name)
-        path = f"{prefix}{info.alias or name}"
+        path = f"{prefix}{key}"
         if isinstance(found, Stated):
             yield path, found
         elif isinstance(found, Model):
@@ -69,14 +76,16 @@ def values_of(file: AssessmentFile) -> list[tuple[str, Stated]]:
 @fact(per="machine", symbol="n", equation="count", source="practice")
 def values_without_source(sheet: FactSheet, _machine: Subject) -> Samples:
     """Number of stated masses, inertias, speeds, torques and main dimensions without a source."""
-    bare = [path for path, value in values_of(sheet.file) if not value.source and path.rpartition(".")[2] in MEASURABLE]
+    stated = sheet.shared("stated values", lambda: values_of(sheet.file))
+    bare = [path for path, value in stated if not value.source and path.rpartition(".")[2] in MEASURABLE]
     return np.array([float(len(bare))])
 
 
 @fact(per="machine", symbol="n", equation="count", source="practice")
 def values_past_calibration(sheet: FactSheet, _machine: Subject) -> Samples | None:
     """Number of values measured with an instrument whose calibration had run out on the day of the assessment."""
-    due = [value.calibration_due for _, value in values_of(sheet.file) if value.calibration_due is not None]
+    stated = sheet.shared("stated values", lambda: values_of(sheet.file))
+    due = [value.calibration_due for _, value in stated if value.calibration_due is not None]
     if not due:
         return None
     if sheet.file.assessment.date is None:

@@ -89,19 +89,20 @@ class FactSheet:
         RuntimeError
             The fact depends on itself (a defect of the program).
         """
-        declaration = FACTS[key]
-        about = subject if subject is not None else self.subjects.of_kind(declaration.per)[0]
-        name = (key, about.name)
-        if name in self._facts:
-            found = self._facts[name]
+        if subject is None:
+            subject = self.subjects.lockout if FACTS[key].per == "lockout" else self.subjects.machine
+        name = (key, subject.name)
+        found = self._facts.get(name)
+        if found is not None:
             if found is _UNDER_WAY:
-                raise RuntimeError(f"the fact {key} of {about.name} depends on itself")
+                raise RuntimeError(f"the fact {key} of {subject.name} depends on itself")
             return None if found is _DOES_NOT_APPLY else found
+        declaration = FACTS[key]
         self._facts[name] = _UNDER_WAY
         frame = _Frame()
         self._frames.append(frame)
         try:
-            value = declaration.function(self, about)
+            value = declaration.function(self, subject)
         finally:
             self._frames.pop()
             del self._facts[name]
@@ -109,10 +110,10 @@ class FactSheet:
             self._facts[name] = _DOES_NOT_APPLY
             return None
         made = self._facts[name] = Fact(
-            key=key, subject=about.name, unit=declaration.unit,
+            key=key, subject=subject.name, unit=declaration.unit,
             value=None if frame.missing or frame.failed else value,
-            missing=tuple(dict.fromkeys(frame.missing)), outside=tuple(dict.fromkeys(frame.outside)), failed=frame.failed,
-            asked=tuple(dict.fromkeys(frame.asked)), steps=tuple(frame.steps),
+            missing=_once(frame.missing), outside=_once(frame.outside), failed=frame.failed,
+            asked=_once(frame.asked), steps=tuple(frame.steps),
         )  # fmt: skip
         return made
 
@@ -369,6 +370,10 @@ class FactSheet:
 
 def _first(value: Any) -> float:
     return float(value.flat[0]) if isinstance(value, np.ndarray) else float(value)
+
+
+def _once(names: list[str]) -> tuple[str, ...]:
+    return tuple(dict.fromkeys(names)) if names else ()
 
 
 def is_number(value: FactValue) -> bool:

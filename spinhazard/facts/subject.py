@@ -58,15 +58,10 @@ class Subjects:
         tuple of Subject
             The subjects.
         """
-        by_kind = {
-            "machine": (self.machine,),
-            "shaft": self.shafts,
-            "part": self.parts,
-            "stop": self.stops,
-            "guard": self.guards,
-            "lockout": (self.lockout,),
-        }
-        return by_kind[kind]
+        if kind in {"machine", "lockout"}:
+            return (self.machine if kind == "machine" else self.lockout,)
+        several = {"shaft": self.shafts, "part": self.parts, "stop": self.stops, "guard": self.guards}
+        return several[kind]
 
     def all(self) -> tuple[Subject, ...]:
         """Every subject, machine first, lockout last.

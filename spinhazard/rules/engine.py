@@ -2,7 +2,9 @@
 
 from __future__ import annotations
 
-from dataclasses import dataclass
+from collections.abc import Callable
+from dataclasses import dataclass, field
+from functools import cached_property
 
 from spinhazard.facts.fact import FACTS, Fact
 from spinhazard.facts.sheet import FactSheet
@@ -30,8 +32,8 @@ class Finding:
         One of the five.
     likelihood : float
         Share of the draws in which the condition holds; 1 or 0 without draws.
-    says : str
-        Message with the numbers put in.
+    words : callable
+        Makes the message; most findings are never read.
     missing : tuple of str
         Fields that would settle it.
     outside : tuple of str
@@ -44,10 +46,15 @@ class Finding:
     subject: str
     outcome: Outcome
     likelihood: float
-    says: str
+    words: Callable[[], str] = field(repr=False, compare=False)
     missing: tuple[str, ...]
     outside: tuple[str, ...]
     facts: tuple[str, ...]
+
+    @cached_property
+    def says(self) -> str:
+        """Message with the numbers put in."""
+        return self.words()
 
 
 def findings(rules: tuple[Rule, ...], sheet: FactSheet, *, system: System = "si") -> list[Finding]:
@@ -112,23 +119,27 @@ def judge(rule: Rule, subject: str, lookup: Lookup, policy: Policy, *, system: S
         met = logic.all_of([met, view.truth(rule.review)])
         if not view.does_not_apply:
             return _decided(view, rule, subject, met, tail=(1.0 - policy.coverage) / 2.0)
-    return _finding(view, rule, subject, "not applicable", 0.0, view.why_not(rule.applies, "Does not apply here"))
+    return _finding(
+        view, rule, subject, "not applicable", 0.0, lambda: view.why_not(rule.applies, "Does not apply here")
+    )
 
 
 def _decided(view: View, rule: Rule, subject: str, met: logic.Truth, *, tail: float) -> Finding:
     """Outcome of a rule that applies."""
     if met[0] == logic.UNKNOWN:
-        return _finding(view, rule, subject, "data missing", 0.0, view.what_is_missing(), missing=view.missing())
+        return _finding(view, rule, subject, "data missing", 0.0, view.what_is_missing, missing=view.missing())
     share = logic.likelihood(met)
     if met[0] == logic.YES:
-        return _finding(view, rule, subject, "for review", share, view.message())
+        return _finding(view, rule, subject, "for review", share, view.message)
     # a share at the end of the coverage interval is inside it, not beyond it by a rounding error
     if share > tail + 1e-12:
         note = f"Not so by the best estimate, but in {100.0 * share:.0f} % of the stated uncertainty."
-        return _finding(view, rule, subject, "borderline", share, f"{view.message()} {note}")
-    reasons = view.why_not((*rule.applies, *rule.review), "Not met")
+        return _finding(view, rule, subject, "borderline", share, lambda: f"{view.message()} {note}")
     doubts = _doubts(view, met, tail)
-    return _finding(view, rule, subject, "borderline" if doubts else "not flagged", share, " ".join((reasons, *doubts)))
+    return _finding(
+        view, rule, subject, "borderline" if doubts else "not flagged", share,
+        lambda: " ".join((view.why_not((*rule.applies, *rule.review), "Not met"), *doubts)),
+    )  # fmt: skip
 
 
 def _doubts(view: View, met: logic.Truth, tail: float) -> list[str]:
@@ -143,6 +154,13 @@ def _doubts(view: View, met: logic.Truth, tail: float) -> list[str]:
 
 
 def _finding(
-    view: View, rule: Rule, subject: str, outcome: Outcome, share: float, says: str, *, missing: tuple[str, ...] = ()
+    view: View,
+    rule: Rule,
+    subject: str,
+    outcome: Outcome,
+    share: float,
+    words: Callable[[], str],
+    *,
+    missing: tuple[str, ...] = (),
 ) -> Finding:
-    return Finding(rule, subject, outcome, share, says, missing, view.outside, view.facts)
+    return Finding(rule, subject, outcome, share, words, missing, view.outside, view.facts)

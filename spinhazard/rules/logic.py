@@ -12,6 +12,9 @@ from numpy.typing import NDArray
 
 Truth = NDArray[np.int8]
 NO, UNKNOWN, YES = 0, 1, 2
+_NO, _UNKNOWN, _YES = (np.array([truth], dtype=np.int8) for truth in (NO, UNKNOWN, YES))
+for _constant in (_NO, _UNKNOWN, _YES):
+    _constant.flags.writeable = False
 _RELATIVE_WIDTH_OF_A_LIMIT = 1e-12  # a value computed to be at the limit is at it, not beyond it by a rounding error
 
 
@@ -28,7 +31,7 @@ def certain(*, holds: bool) -> Truth:
     ndarray, shape (1,)
         YES or NO.
     """
-    return np.array([YES if holds else NO], dtype=np.int8)
+    return _YES if holds else _NO
 
 
 def unknown() -> Truth:
@@ -39,7 +42,7 @@ def unknown() -> Truth:
     ndarray, shape (1,)
         UNKNOWN.
     """
-    return np.array([UNKNOWN], dtype=np.int8)
+    return _UNKNOWN
 
 
 def exceeds(left: NDArray[np.float64], right: NDArray[np.float64]) -> Truth:
@@ -55,9 +58,15 @@ def exceeds(left: NDArray[np.float64], right: NDArray[np.float64]) -> Truth:
     ndarray, shape (n,) or (1,)
         YES or NO; UNKNOWN where a side is not a number, as never over never.
     """
+    if left.size == right.size == 1:  # the best estimate alone, or nothing with a spread
+        one, other = float(left[0]), float(right[0])
+        if one != one or other != other:  # noqa: PLR0124  (NaN)
+            return _UNKNOWN
+        return certain(holds=one > other + abs(other) * _RELATIVE_WIDTH_OF_A_LIMIT)
     with np.errstate(invalid="ignore", over="ignore"):
-        greater = left > right + np.where(np.isfinite(right), np.abs(right), 0.0) * _RELATIVE_WIDTH_OF_A_LIMIT
-    return np.where(np.isnan(left) | np.isnan(right), UNKNOWN, np.where(greater, YES, NO)).astype(np.int8)
+        truth = (left > right + np.abs(right) * _RELATIVE_WIDTH_OF_A_LIMIT).astype(np.int8) * np.int8(YES)
+    known = (left == left) & (right == right)  # noqa: PLR0124  (false for NaN, and quicker than asking isnan twice)
+    return truth if known.all() else np.where(known, truth, np.int8(UNKNOWN))
 
 
 def all_of(truths: Sequence[Truth]) -> Truth:
@@ -73,8 +82,10 @@ def all_of(truths: Sequence[Truth]) -> Truth:
     ndarray
         Their minimum.
     """
-    result = certain(holds=True)
-    for truth in truths:
+    if not truths:
+        return certain(holds=True)
+    result = truths[0]
+    for truth in truths[1:]:
         result = np.minimum(result, truth)
     return result
 
@@ -92,8 +103,10 @@ def any_of(truths: Sequence[Truth]) -> Truth:
     ndarray
         Their maximum.
     """
-    result = certain(holds=False)
-    for truth in truths:
+    if not truths:
+        return certain(holds=False)
+    result = truths[0]
+    for truth in truths[1:]:
         result = np.maximum(result, truth)
     return result
 

@@ -83,7 +83,13 @@ class View:
         return logic.all_of([self._holds(condition) for condition in conditions])
 
     def _holds(self, condition: Condition) -> logic.Truth:
-        lines = condition.conditions if isinstance(condition, Alternatives) else (condition,)
+        if isinstance(condition, Comparison):
+            truth = self._compare(condition)
+            if truth is not None:
+                return truth
+            lines: tuple[Comparison, ...] = (condition,)
+        else:
+            lines = condition.conditions
         truths = [truth for truth in map(self._compare, lines) if truth is not None]
         if not truths:
             self._absent += [key for line in lines for key in _facts_of(line) if self._fact(key) is None]

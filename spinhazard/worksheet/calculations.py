@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 import numpy as np
-from reportlab.platypus import Flowable, Paragraph
+from reportlab.platypus import Flowable
 
 from spinhazard.assessment import equation_of
 from spinhazard.facts.fact import FACTS, Fact, Step
@@ -12,7 +12,7 @@ from spinhazard.quantity.display import display
 from spinhazard.sources import citation
 from spinhazard.worksheet.page import Sheet, group, heading
 from spinhazard.worksheet.style import BODY, CELL, SMALL
-from spinhazard.worksheet.text import paragraph, plain, shares, table
+from spinhazard.worksheet.text import marked_up, paragraph, plain, shares, table
 
 MOST_STEPS = 12
 UNITS = {
@@ -69,7 +69,7 @@ def calculations(sheet: Sheet, number: int) -> list[Flowable]:
 def _row(sheet: Sheet, fact: Fact) -> list[str | Flowable | list[Flowable]]:
     declaration = FACTS[fact.key]
     symbol = f"{declaration.symbol}: " if declaration.symbol else ""
-    name = Paragraph(
+    name = marked_up(
         f'<a name="fact-{plain(fact.key)}"/><b>{plain(fact.key)}</b><br/>{plain(declaration.label)}', SMALL
     )
     middle: list[Flowable] = [paragraph(line, SMALL) for line in _lines(sheet, fact)] or [

@@ -2,14 +2,14 @@
 
 from __future__ import annotations
 
-from reportlab.platypus import Flowable, KeepTogether, Paragraph
+from reportlab.platypus import Flowable, KeepTogether
 
 from spinhazard.rules.engine import Finding
 from spinhazard.rules.rule import URGENCIES
 from spinhazard.sources import citation
 from spinhazard.worksheet.page import Sheet, group, heading
 from spinhazard.worksheet.style import BODY, SMALL
-from spinhazard.worksheet.text import paragraph, plain, shares, table
+from spinhazard.worksheet.text import marked_up, paragraph, plain, shares, table
 
 MARKS = {"for review": "■ for review", "borderline": "◪ borderline", "data missing": "□ data missing"}
 """State is said in words and by a filled, half-filled or empty square; never by colour."""
@@ -55,7 +55,7 @@ def _finding(finding: Finding) -> Flowable:
     basis = "; ".join(citation(reference) for reference in rule.basis)
     numbers = ", ".join(dict.fromkeys(name.partition("|")[0] for name in finding.facts))
     lines = [
-        Paragraph(head, BODY),
+        marked_up(head, BODY),
         paragraph(finding.says, BODY),
         paragraph(f"Why: {rule.because}", SMALL),
         paragraph(f"Basis: {basis}.", SMALL),

@@ -55,8 +55,25 @@ def drawable(text: object) -> str:
     return "".join(c if ord(c) in known else f"[U+{ord(c):04X}]" for c in whole)
 
 
+class _Paragraph(Paragraph):  # type: ignore[misc]  # reportlab has no types
+    """A paragraph that remembers its lines for a width: tables ask for the height of each cell again on every page."""
+
+    _size: tuple[float, tuple[float, float]] | None = None
+
+    def wrap(self, available_width: float, available_height: float) -> tuple[float, float]:
+        if self._size is None or self._size[0] != available_width:
+            self._size = (available_width, super().wrap(available_width, available_height))
+        return self._size[1]
+
+
+@lru_cache(maxsize=64)
+def _fragment(style: ParagraphStyle) -> Any:
+    """The one fragment a paragraph of this style is made of, to be copied with another text."""
+    return Paragraph("x", style).frags[0]
+
+
 def paragraph(text: object, style: ParagraphStyle = CELL) -> Paragraph:
-    """A paragraph of plain text.
+    """A paragraph of plain text, which never meets the markup parser.
 
     Parameters
     ----------
@@ -70,7 +87,25 @@ def paragraph(text: object, style: ParagraphStyle = CELL) -> Paragraph:
     Paragraph
         Flowable.
     """
-    return Paragraph(plain(text), style)
+    return _Paragraph("", style, frags=[_fragment(style).clone(text=" ".join(drawable(text).split()))])
+
+
+def marked_up(text: str, style: ParagraphStyle = CELL) -> Paragraph:
+    """A paragraph with our own markup; what a user wrote goes through :func:`plain` first.
+
+    Parameters
+    ----------
+    text : str
+        Text with reportlab's markup.
+    style : ParagraphStyle
+        Style.
+
+    Returns
+    -------
+    Paragraph
+        Flowable.
+    """
+    return _Paragraph(text, style)
 
 
 Cell: TypeAlias = Any  # text, taken literally, or flowables (reportlab has no types)
