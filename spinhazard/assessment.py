@@ -85,8 +85,7 @@ class Assessment:
         Fact or None
             The fact.
         """
-        about = next(entry for entry in self.sheet.subjects.all() if entry.name == subject)
-        return self.sheet.fact(key, about)
+        return self.sheet.fact(key, self.sheet.by_name[subject])
 
     def interval(self, fact: Fact) -> tuple[float, float]:
         """Coverage interval of a fact.
@@ -114,6 +113,18 @@ def program_name() -> str:
         Such as ``spinhazard 0.1.0``.
     """
     return f"spinhazard {metadata.version('spinhazard')}"
+
+
+@lru_cache(maxsize=1)
+def shipped_policy() -> Policy:
+    """The shipped defaults.
+
+    Returns
+    -------
+    Policy
+        Frozen, so one serves all.
+    """
+    return Policy()
 
 
 def assess(
@@ -149,7 +160,7 @@ def assess(
     InputError
         Stated values contradict each other.
     """  # noqa: DOC502  (raised by what is called)
-    policy = policy or Policy()
+    policy = policy or shipped_policy()
     catalogue = catalogue or shipped_catalogue()
     digests = {
         "inputs": _digest(reading.text),

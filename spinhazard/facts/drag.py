@@ -30,6 +30,10 @@ def drivetrain(sheet: FactSheet, shaft: Subject) -> dict[str, Samples]:
     dict
         Identifier of the shaft to samples of its ratio to the reference shaft.
     """
+    return sheet.shared(f"drivetrain of {shaft.name}", lambda: _ratios(sheet, shaft))
+
+
+def _ratios(sheet: FactSheet, shaft: Subject) -> dict[str, Samples]:
     ratios: dict[str, Samples] = {shaft.entity.id: np.ones(1)}
     waiting = [shaft.entity]
     while waiting:

@@ -5,7 +5,7 @@ from __future__ import annotations
 from collections.abc import Callable, Mapping, Sequence
 from dataclasses import dataclass
 from datetime import date
-from typing import TYPE_CHECKING, Any
+from typing import TYPE_CHECKING, Any, NamedTuple
 
 import numpy as np
 
@@ -20,8 +20,7 @@ Word = str | bool | date | tuple[str, ...]
 FactValue = Samples | Word | None
 
 
-@dataclass(frozen=True, slots=True)
-class Step:
+class Step(NamedTuple):
     """One formula as it was used: best-estimate arguments by parameter name, and the result [SI]."""
 
     formula: Formula
@@ -29,8 +28,7 @@ class Step:
     result: float
 
 
-@dataclass(frozen=True, slots=True)
-class Fact:
+class Fact(NamedTuple):
     """One quantity of one subject.
 
     Attributes

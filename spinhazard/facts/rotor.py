@@ -306,8 +306,7 @@ def _rests_on_estimate(sheet: FactSheet, part: Subject) -> bool:
             if name in sheet.stated and sheet.stated[name].source_class == "estimated":
                 return True
             continue
-        subject = next(entry for entry in sheet.subjects.all() if entry.name == about)
-        fact = sheet.fact(key, subject)
+        fact = sheet.fact(key, sheet.by_name[about])
         asked |= set(fact.asked if fact is not None else ()) - seen
     return False
 

@@ -62,6 +62,7 @@ class FactSheet:
         self.file = file
         self.rules = policy
         self.subjects: Subjects = subjects_of(file)
+        self.by_name = {subject.name: subject for subject in self.subjects.all()}
         self.stated: dict[str, Stated] = {}
         self._sampler = sampler
         self._facts: dict[tuple[str, str], Fact] = {}
@@ -354,22 +355,24 @@ class FactSheet:
             Its result; NaN where the arguments do not fit each other, which is then recorded.
         """
         frame = self._frames[-1]
-        names = formula.__code__.co_varnames
-        given = {**dict(zip(names, arguments, strict=False)), **named}
+        given = dict(zip(formula.__code__.co_varnames, arguments, strict=False))
+        given.update(named)
         try:
-            result: Samples = np.atleast_1d(formula(*arguments, **named))
+            result: Samples = formula(*arguments, **named)
         except ValueError as error:
             frame.failed = frame.failed or f"within the stated spreads the values do not fit each other: {error}"
             return NOT_KNOWN
+        if result.ndim == 0:
+            result = result.reshape(1)
         about = record(formula)
         best = {name: _first(value) for name, value in given.items() if not isinstance(value, str)}
         frame.outside += about.range_breaches(best) if about.valid else ()
-        frame.steps.append(Step(about, best, float(result[0])))
+        frame.steps.append(Step(about, best, float(result.item(0))))
         return result
 
 
 def _first(value: Any) -> float:
-    return float(value.flat[0]) if isinstance(value, np.ndarray) else float(value)
+    return float(value.item(0)) if isinstance(value, np.ndarray) else float(value)
 
 
 def _once(names: list[str]) -> tuple[str, ...]:

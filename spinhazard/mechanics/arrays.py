@@ -29,7 +29,7 @@ def not_negative(name: str, value: ArrayLike, unit: str) -> Array:
         An entry is negative.
     """
     array = np.asarray(value, dtype=np.float64)
-    if (array < 0.0).any():
+    if array.item() < 0.0 if array.size == 1 else (array < 0.0).any():
         raise ValueError(f"{name} = {_worst(array, array < 0.0)} {unit}: accepted is 0 or more".replace(" :", ":"))
     return array
 
@@ -55,7 +55,7 @@ def positive(name: str, value: ArrayLike, unit: str) -> Array:
         An entry is zero or negative.
     """
     array = np.asarray(value, dtype=np.float64)
-    if (array <= 0.0).any():
+    if array.item() <= 0.0 if array.size == 1 else (array <= 0.0).any():
         raise ValueError(f"{name} = {_worst(array, array <= 0.0)} {unit}: accepted is more than 0".replace(" :", ":"))
     return array
 

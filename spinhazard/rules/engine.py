@@ -115,7 +115,7 @@ def judge(rule: Rule, subject: str, lookup: Lookup, policy: Policy, *, system: S
     """
     view = View(rule, lookup, policy, system)
     met = view.truth(rule.applies)
-    if not view.does_not_apply and bool((met != logic.NO).any()):
+    if not view.does_not_apply and met.max() > logic.NO:
         met = logic.all_of([met, view.truth(rule.review)])
         if not view.does_not_apply:
             return _decided(view, rule, subject, met, tail=(1.0 - policy.coverage) / 2.0)

@@ -124,8 +124,9 @@ def likelihood(truth: Truth) -> float:
     float
         Between 0 and 1.
     """
-    draws = truth[1:] if truth.size > 1 else truth
-    return float(np.count_nonzero(draws == YES) / draws.size)
+    if truth.size == 1:
+        return float(truth[0] == YES)
+    return float(np.count_nonzero(truth[1:] == YES) / (truth.size - 1))
 
 
 def undecided(truth: Truth) -> float:

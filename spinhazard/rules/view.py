@@ -44,6 +44,7 @@ class View:
         self._rule, self._lookup, self._policy, self._system = rule, lookup, policy, system
         self._seen: dict[str, Fact | None] = {}
         self._absent: list[str] = []
+        self._outside: list[str] = []
 
     @property
     def does_not_apply(self) -> bool:
@@ -58,14 +59,15 @@ class View:
     @property
     def outside(self) -> tuple[str, ...]:
         """Ranges of methods that were left on the way."""
-        return tuple(
-            dict.fromkeys(breach for fact in self._seen.values() if fact is not None for breach in fact.outside)
-        )
+        return tuple(dict.fromkeys(self._outside)) if self._outside else ()
 
     def _fact(self, key: str) -> Fact | None:
-        if key not in self._seen:
-            self._seen[key] = self._lookup(key)
-        return self._seen[key]
+        if key in self._seen:
+            return self._seen[key]
+        fact = self._seen[key] = self._lookup(key)
+        if fact is not None and fact.outside:
+            self._outside += fact.outside
+        return fact
 
     def truth(self, conditions: tuple[Condition, ...]) -> logic.Truth:
         """Whether all conditions hold, draw by draw.

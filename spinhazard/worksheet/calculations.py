@@ -85,7 +85,7 @@ def _row(sheet: Sheet, fact: Fact) -> list[str | Flowable | list[Flowable]]:
         result += f" ({fact.failed})"
     if fact.outside:
         result += f" (outside the range of the method: {'; '.join(fact.outside)})"
-    path = next(subject.path for subject in sheet.assessment.sheet.subjects.all() if subject.name == fact.subject)
+    path = sheet.assessment.sheet.by_name[fact.subject].path
     made_from = "; ".join(_short(name, fact.subject, path) for name in fact.asked)
     return [name, middle, paragraph(result, CELL), paragraph(made_from, SMALL)]
 
