@@ -10,6 +10,8 @@ import subprocess
 import sys
 from pathlib import Path
 
+from spinhazard.selfcheck.runner import run_all
+
 from spinhazard.assessment import equation_of
 from spinhazard.cli.app import app
 from spinhazard.cli.rules import in_words
@@ -18,7 +20,6 @@ from spinhazard.mechanics.formula import REGISTRY, printed
 from spinhazard.quantity.units import KINDS, UNIT_NAMES
 from spinhazard.rules.loading import shipped_catalogue
 from spinhazard.rules.rule import Rule
-from spinhazard.selfcheck.runner import run_all
 from spinhazard.sources import citation, load_sources
 
 FOLDER = Path(__file__).parent / "generated"
@@ -47,7 +48,16 @@ def formulas() -> str:
                 continue
             symbols = ", ".join(f"{printed(symbol)} {parameter}" for parameter, symbol in formula.symbols.items())
             ranges = "; ".join(f"{what}: {low:g} to {high:g}" for what, (low, high) in formula.valid.items())
-            rows.append((name.partition(".")[2], printed(formula.equation), formula.unit or "–", symbols, ranges, citation(formula.source)))
+            rows.append(
+                (
+                    name.partition(".")[2],
+                    printed(formula.equation),
+                    formula.unit or "–",
+                    symbols,
+                    ranges,
+                    citation(formula.source),
+                )
+            )
         pages.append(f"## {module}\n\n" + table(("formula", "equation", "unit", "symbols", "range", "source"), rows))
     return "\n".join(pages)
 
@@ -76,7 +86,10 @@ def rule_page(rule: Rule) -> str:
     lines.append("Rests on\n\n" + "\n".join(f"- {citation(basis)}" for basis in rule.basis) + "\n")
     if rule.measures:
         lines.append("What may be changed\n\n" + "\n".join(f"- `{lever}`" for lever in rule.measures) + "\n")
-    rows = [(", ".join(f"{k} = {v}" for k, v in example.given.items()), example.expect, example.note) for example in rule.examples]
+    rows = [
+        (", ".join(f"{k} = {v}" for k, v in example.given.items()), example.expect, example.note)
+        for example in rule.examples
+    ]
     lines.append("Examples\n\n" + table(("given", "outcome", "note"), rows))
     return "\n".join(lines)
 
@@ -95,10 +108,11 @@ def validation() -> str:
     """Every check value with what the program computes."""
     results = run_all()
     published = sum(result.check.kind == "published" for result in results)
-    pages = [
+    head = (
         f"# Validation\n\n{len(results)} check values, {published} of them published ones; the rest are recomputed or regression values,"
         " which are no evidence of their own. Figures from memory are marked. `spinhazard selfcheck` prints the same on any installation.\n"
-    ]
+    )
+    pages = [head]
     for subject in dict.fromkeys(result.check.subject for result in results):
         rows = [
             (r.check.name, citation(r.check.source), r.check.stated, f"{r.check.expect:.6g}", f"{r.computed:.6g}", f"{r.deviation:.1e}",
@@ -112,13 +126,18 @@ def validation() -> str:
 
 def sources() -> str:
     """The bibliography."""
-    rows = [(s.id, s.short, s.author, s.title, s.edition, s.publisher, s.status, s.note) for s in load_sources().values()]
+    rows = [
+        (s.id, s.short, s.author, s.title, s.edition, s.publisher, s.status, s.note) for s in load_sources().values()
+    ]
     return "# Sources\n\n" + table(("id", "short", "author", "title", "edition", "publisher", "status", "note"), rows)
 
 
 def units() -> str:
     """Kinds of quantity and known units."""
-    rows = [(kind.name, kind.example, kind.si, ", ".join(kind.table) if kind.table else "any product of the units below") for kind in KINDS.values()]
+    products = "any product of the units below"
+    rows = [
+        (kind.name, kind.example, kind.si, ", ".join(kind.table) if kind.table else products) for kind in KINDS.values()
+    ]
     text = "# Units\n\n" + table(("kind", "example", "SI unit", "units"), rows)
     return text + "\nUnits that products are made of: " + ", ".join(f"`{name}`" for name in UNIT_NAMES) + ".\n"
 
@@ -126,7 +145,10 @@ def units() -> str:
 def command_line() -> str:
     """Help texts at 80 columns."""
     pages = ["# Command line\n"]
-    for command in ["", *(entry.name or entry.callback.__name__ for entry in app.registered_commands if entry.callback)]:
+    for command in [
+        "",
+        *(entry.name or entry.callback.__name__ for entry in app.registered_commands if entry.callback),
+    ]:
         environment = {**os.environ, "COLUMNS": "80", "TERMINAL_WIDTH": "80", "NO_COLOR": "1"}
         words = [sys.executable, "-m", "spinhazard", *([command] if command else []), "--help"]
         done = subprocess.run(words, capture_output=True, text=True, env=environment, check=True)  # noqa: S603  (our own program)

@@ -96,7 +96,9 @@ def assess_text():
     from spinhazard import assess, assessment_from_text
     from spinhazard.rules.loading import Catalogue
 
-    def run(text, *, best_estimate=True, catalogue=Catalogue((), "none"), **options):
+    no_rules = Catalogue((), "none")
+
+    def run(text, *, best_estimate=True, catalogue=no_rules, **options):
         return assess(
             assessment_from_text(text, name="test.toml"), best_estimate=best_estimate, catalogue=catalogue, **options
         )

@@ -399,7 +399,6 @@ EXPECTED = {
             "energy-growth-at-max-speed": ["machine"],
             "tip-speed-above-guide": ["part:flywheel/rim", "part:flywheel/web"],
             "burst-margin-low": ["part:flywheel/rim", "part:flywheel/web"],
-            "rim-stress-high": ["part:flywheel/rim", "part:flywheel/web"],
         },
     },
     "basket-centrifuge": {

@@ -62,7 +62,7 @@ def test_existing_output_is_left_as_it_is(tmp_path):
     assert target.read_bytes() == b"old"
     write_file(target, b"new", overwrite=True)
     assert target.read_bytes() == b"new"
-    assert os.listdir(tmp_path) == ["out.pdf"]
+    assert [path.name for path in tmp_path.iterdir()] == ["out.pdf"]
 
 
 def test_failed_writing_leaves_nothing_behind(tmp_path, monkeypatch):
@@ -77,7 +77,7 @@ def test_failed_writing_leaves_nothing_behind(tmp_path, monkeypatch):
         write_file(target, b"new", overwrite=True)
 
     assert target.read_bytes() == b"old"
-    assert os.listdir(tmp_path) == ["out.pdf"]
+    assert [path.name for path in tmp_path.iterdir()] == ["out.pdf"]
 
 
 def test_folder_or_missing_folder_as_output_is_refused(tmp_path):

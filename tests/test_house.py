@@ -2,6 +2,7 @@
 
 import ast
 import inspect
+import itertools
 import re
 import subprocess
 import sys
@@ -159,9 +160,8 @@ def strings_of(source):
 
 def test_the_tool_never_claims_safety():
     shown = [text for path in MODULES if path.name != "rule.py" for text in strings_of(path.read_text("utf-8"))]
-    for path in [*PACKAGE.rglob("*.toml"), *(ROOT / "examples").glob("*")]:
-        if path.name != "sources.toml":
-            shown.append(path.read_text("utf-8"))
+    files = [*PACKAGE.rglob("*.toml"), *(ROOT / "examples").glob("*")]
+    shown += [path.read_text("utf-8") for path in files if path.name != "sources.toml"]
 
     assert [match[0] for text in shown for match in FORBIDDEN.finditer(text)] == []
     assert FORBIDDEN.search("this guard is safe")
@@ -216,7 +216,7 @@ def test_each_dependency_is_justified_in_one_line():
     project = tomllib.loads((ROOT / "pyproject.toml").read_text("utf-8"))["project"]
     names = [
         re.match(r"[A-Za-z0-9-]+", entry)[0]
-        for entry in [*project["dependencies"], *sum(project["optional-dependencies"].values(), [])]
+        for entry in itertools.chain(project["dependencies"], *project["optional-dependencies"].values())
     ]
     lines = (ROOT / "docs/dependencies.md").read_text("utf-8").split("\n")
 

@@ -91,7 +91,7 @@ def unbalance_torque(sheet: FactSheet, shaft: Subject) -> Samples | None:
 
 @fact(per="shaft", unit="N m", symbol="a_i", equation="a_i = a / i", source="spinhazard-methods drag")
 def dry_friction_at_shaft(sheet: FactSheet, shaft: Subject) -> Samples | None:
-    """Dry friction of the drivetrain as felt at this shaft; None where the stop does not cover it."""
+    """Dry friction of the drivetrain as felt at this shaft."""
     if sheet.file.stopping is None:
         return sheet.missing("stopping.shaft")
     ratios = drivetrain(sheet, sheet.subjects.shaft(sheet.file.stopping.shaft))

@@ -104,17 +104,17 @@ class FactSheet:
         self._frames.append(frame)
         try:
             value = declaration.function(self, subject)
+        except BaseException:
+            del self._facts[name]
+            raise
         finally:
             self._frames.pop()
-            del self._facts[name]
         if value is None and not frame.missing and not frame.failed:
             self._facts[name] = _DOES_NOT_APPLY
             return None
         made = self._facts[name] = Fact(
-            key=key, subject=subject.name, unit=declaration.unit,
-            value=None if frame.missing or frame.failed else value,
-            missing=_once(frame.missing), outside=_once(frame.outside), failed=frame.failed,
-            asked=_once(frame.asked), steps=tuple(frame.steps),
+            key, subject.name, declaration.unit, None if frame.missing or frame.failed else value, _once(frame.missing),
+            _once(frame.outside), frame.failed, _once(frame.asked), tuple(frame.steps),
         )  # fmt: skip
         return made
 

@@ -98,14 +98,21 @@ def ultimate_strength(sheet: FactSheet, part: Subject) -> Samples | None:
 @fact(per="part", unit="Pa", symbol="σ_y")
 def yield_strength(sheet: FactSheet, part: Subject) -> Samples | None:
     """Yield strength of the material in the table."""
-    return _figure(sheet, part, "yield_strength") if part.entity.shape in ROUND else None
+    if part.entity.shape not in ROUND:
+        return None
+    if part.entity.material is None:
+        return sheet.missing(f"{part.path}.material")
+    return _figure(sheet, part, "yield_strength")
 
 
 @fact(per="part", symbol="σ/σ_y", equation="σ / σ_y", source="timoshenko-som2")
 def yield_share(sheet: FactSheet, part: Subject) -> Samples | None:
     """Largest elastic stress at the highest attainable speed over yield strength."""
-    stress, limit = sheet.where_applies("peak_stress_at_max_speed", part), sheet.where_applies("yield_strength", part)
-    return None if stress is None or limit is None else stress / limit
+    limit = sheet.where_applies("yield_strength", part)
+    if limit is None:  # grey iron has no yield point; there is nothing to compare and nothing missing
+        return None
+    stress = sheet.where_applies("peak_stress_at_max_speed", part)
+    return None if stress is None else stress / limit
 
 
 @fact(per="part", unit="rad/s", symbol="ω_b", formulas=[strength.burst_speed])

@@ -20,7 +20,7 @@ Dimension = tuple[int, int, int, int]  # powers of length, mass, time, temperatu
 UNIT_NAMES: dict[str, str] = {
     "m": "meter", "cm": "centimeter", "mm": "millimeter", "um": "micrometer", "µm": "micrometer", "μm": "micrometer",
     "km": "kilometer", "in": "inch", "inch": "inch", "inches": "inch", "ft": "foot", "mil": "thou", "thou": "thou",
-    "yd": "yard",
+    "yd": "yard", "mile": "mile",
     "kg": "kilogram", "g": "gram", "mg": "milligram", "t": "metric_ton", "lb": "pound", "lbs": "pound", "oz": "ounce",
     "slug": "slug",
     "s": "second", "sec": "second", "ms": "millisecond", "min": "minute", "h": "hour", "hr": "hour", "d": "day",

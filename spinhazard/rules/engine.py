@@ -36,10 +36,8 @@ class Finding:
         Makes the message; most findings are never read.
     missing : tuple of str
         Fields that would settle it.
-    outside : tuple of str
-        Ranges of methods that were left on the way.
-    facts : tuple of str
-        Facts it was decided on, as "key|subject".
+    view : View
+        What the rule saw.
     """
 
     rule: Rule
@@ -48,8 +46,17 @@ class Finding:
     likelihood: float
     words: Callable[[], str] = field(repr=False, compare=False)
     missing: tuple[str, ...]
-    outside: tuple[str, ...]
-    facts: tuple[str, ...]
+    view: View = field(repr=False, compare=False)
+
+    @property
+    def outside(self) -> tuple[str, ...]:
+        """Ranges of methods that were left on the way."""
+        return self.view.outside
+
+    @property
+    def facts(self) -> tuple[str, ...]:
+        """Facts it was decided on, as "key|subject"."""
+        return self.view.facts
 
     @cached_property
     def says(self) -> str:
@@ -163,4 +170,4 @@ def _finding(
     *,
     missing: tuple[str, ...] = (),
 ) -> Finding:
-    return Finding(rule, subject, outcome, share, words, missing, view.outside, view.facts)
+    return Finding(rule, subject, outcome, share, words, missing, view)

@@ -9,6 +9,7 @@ import numpy as np
 from spinhazard.facts.fact import FACTS, Fact, FactValue
 from spinhazard.quantity.display import System, display
 from spinhazard.quantity.stated import Stated
+from spinhazard.quantity.units import KINDS
 from spinhazard.rules import logic
 from spinhazard.rules.loading import PLACEHOLDER
 from spinhazard.rules.rule import Alternatives, Comparison, Condition, Rule
@@ -188,8 +189,13 @@ class View:
         """
         if name.startswith("policy."):
             setting = getattr(self._policy, name.removeprefix("policy."))
-            return setting.text if isinstance(setting, Stated) else str(setting)
-        return shown(self._fact(name), self._system)
+            return (
+                display(setting.value, KINDS[setting.kind].si, system=self._system)
+                if isinstance(setting, Stated)
+                else str(setting)
+            )
+        # a fact that is only told does not become one the rule was decided on
+        return shown(self._seen[name] if name in self._seen else self._lookup(name), self._system)
 
     def why_not(self, conditions: tuple[Condition, ...], opening: str) -> str:
         """The comparisons that did not hold, in words.

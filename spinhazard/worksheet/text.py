@@ -61,7 +61,7 @@ class _Paragraph(Paragraph):  # type: ignore[misc]  # reportlab has no types
     _size: tuple[float, tuple[float, float]] | None = None
 
     def wrap(self, available_width: float, available_height: float) -> tuple[float, float]:
-        if self._size is None or self._size[0] != available_width:
+        if self._size is None or self._size[0] != available_width or not hasattr(self, "blPara"):
             self._size = (available_width, super().wrap(available_width, available_height))
         return self._size[1]
 

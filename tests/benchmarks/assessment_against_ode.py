@@ -32,7 +32,7 @@ def coast_down() -> object:
     return solve_ivp(motion, (0.0, 1e4), [155.0], rtol=1e-9, atol=1e-9, events=stopped)
 
 
-def seconds(work) -> float:  # type: ignore[no-untyped-def]  # noqa: ANN001
+def seconds(work) -> float:  # type: ignore[no-untyped-def]
     """Lower quartile of the times of repeated runs; what disturbs a run only makes it longer."""
     times = []
     for _ in range(ROUNDS):

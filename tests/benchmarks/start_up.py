@@ -21,7 +21,7 @@ def seconds(arguments: list[str], *, codes: tuple[int, ...] = (0,)) -> float:
     times = []
     for _ in range(ROUNDS):
         started = time.perf_counter()
-        done = subprocess.run([sys.executable, *arguments], cwd=ROOT, capture_output=True, check=False)  # noqa: S603
+        done = subprocess.run([sys.executable, *arguments], cwd=ROOT, capture_output=True, check=False)
         times.append(time.perf_counter() - started)
         if done.returncode not in codes:
             raise SystemExit(done.stderr.decode())

@@ -90,7 +90,7 @@ def test_part_without_mass_and_material_names_what_would_settle_it(assess_text):
 def test_mass_and_density_that_disagree_are_refused(assess_text):
     from spinhazard import InputError
 
-    with pytest.raises(InputError, match="line 15, shaft.s.part.p.density: mass and density do not fit"):
+    with pytest.raises(InputError, match=r"line 15, shaft\.s\.part\.p\.density: mass and density do not fit"):
         assess_text(
             PART + 'shape = "disk"\ndiameter = "1 m"\nthickness = "20 mm"\nmass = "10 kg"\ndensity = "8000 kg/m3"'
         )

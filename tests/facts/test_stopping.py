@@ -1,5 +1,6 @@
 """Stop cases against an independent integration of the equation of motion, stage by stage."""
 
+import itertools
 import math
 
 import numpy as np
@@ -16,7 +17,7 @@ def by_ode(delay, brakes, *, standstill=0.0, inertia=INERTIA, speed=SPEED, drag=
     times = sorted({delay + start for _, start in brakes} | {delay})
     state, now, work = np.array([speed, speed * delay, 0.0]), delay, 0.0
     edges = [*times, 1e6]
-    for begin, end in zip(edges[:-1], edges[1:], strict=True):
+    for begin, end in itertools.pairwise(edges):
         torque = sum(t for t, start in brakes if delay + start <= begin + 1e-12)
 
         def motion(_t, y, torque=torque):
@@ -187,7 +188,9 @@ def test_longest_reading_counts_and_from_five_on_mean_plus_three_deviations(fan,
 
 def test_loss_power_gives_the_drag_of_its_law(fan, assess_text):
     drag = 'friction_torque = "3.1 N m"\nviscous = "0.002 N m s"\nwindage = "0.0041 N m s2"'
-    losses = 'loss_power = [{ speed = "1480 rpm", power = "14 kW", law = "fan" }, { speed = "1480 rpm", power = "500 W", law = "constant torque" }, { speed = "1480 rpm", power = "100 W", law = "viscous" }]'
+    laws = {"fan": "14 kW", "constant torque": "500 W", "viscous": "100 W"}
+    entries = ", ".join(f'{{ speed = "1480 rpm", power = "{power}", law = "{law}" }}' for law, power in laws.items())
+    losses = f"loss_power = [{entries}]"
     result = assess_text(fan.replace(drag, losses))
 
     assert result.fact("constant_drag").best == pytest.approx(500 / SPEED)

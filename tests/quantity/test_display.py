@@ -37,7 +37,7 @@ def test_what_is_no_finite_number_has_words():
     assert display(float("inf"), "s") == "never"
     assert display(float("inf"), "m") == "without limit"
     assert display(float("nan"), "m") == "not known"
-    assert display(True) == "yes"
+    assert display(value=True) == "yes"
     assert display(date(2026, 11, 20)) == "2026-11-20"
     assert display("hinged") == "hinged"
 

@@ -112,7 +112,7 @@ def test_hostile_text_is_refused_in_microseconds():
     ):
         started = time.perf_counter()
         for _ in range(100):
-            with pytest.raises(NotationError, match="."):
+            with pytest.raises(NotationError, match=r"\w"):
                 parse_stated(text, "mass")
         assert (time.perf_counter() - started) / 100 < 0.002
 
@@ -121,10 +121,9 @@ def test_hostile_text_is_refused_in_microseconds():
 def test_no_text_makes_the_reader_crash(text, kind):
     try:
         stated = parse_stated(text, kind)
-    except NotationError as error:
-        assert str(error)
-    else:
-        assert math.isfinite(stated.value)
+    except NotationError:
+        return
+    assert math.isfinite(stated.value)
 
 
 @given(st.floats(min_value=1e-6, max_value=1e6), st.floats(min_value=0.0, max_value=99.0))

@@ -291,7 +291,7 @@ def test_several_causes_are_one_word_with_commas():
     assert judged(rule, word("back_drive", ("draught", "gravity"))).outcome == "for review"
 
 
-def test_a_setting_of_the_policy_is_the_limit_and_is_told_as_written():
+def test_a_setting_of_the_policy_is_the_limit_and_is_told_in_the_units_shown():
     rule = rule_of(
         'review = [["stored_energy", "exceeds", "policy.energy_review_level"]]',
         each="machine",
@@ -299,9 +299,9 @@ def test_a_setting_of_the_policy_is_the_limit_and_is_told_as_written():
     )
     site = Policy(energy_review_level="0.5 kJ")
 
-    assert judged(rule, number("stored_energy", 600.0, unit="J"), policy=site).says == "Level 0.5 kJ."
+    assert judged(rule, number("stored_energy", 600.0, unit="J"), policy=site).says == "Level 500 J."
     assert judged(rule, number("stored_energy", 400.0, unit="J"), policy=site).says == (
-        "Not met: energy stored in all turning parts in running (400 J) does not exceed 0.5 kJ (policy)."
+        "Not met: energy stored in all turning parts in running (400 J) does not exceed 500 J (policy)."
     )
 
 

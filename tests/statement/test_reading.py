@@ -96,7 +96,7 @@ def test_all_complaints_of_a_file_come_at_once_in_the_order_of_its_lines():
         + '[lockout]\nwait = "soon"\n'
     )
 
-    with pytest.raises(InputError, match=".") as caught:
+    with pytest.raises(InputError, match=r"\w") as caught:
         read(text)
 
     complaints = caught.value.complaints
@@ -127,7 +127,7 @@ def test_broken_toml_is_one_clear_complaint(text):
 
 @given(st.text(max_size=300))
 def test_no_text_makes_the_reader_crash(text):
-    with pytest.raises(InputError, match="."):
+    with pytest.raises(InputError, match=r"\w"):
         assessment_from_text(text, name="x")
 
 
