@@ -4,6 +4,7 @@ import ast
 import inspect
 import itertools
 import re
+import shutil
 import subprocess
 import sys
 import tomllib
@@ -196,7 +197,7 @@ def test_generated_docs_are_not_stale():
 
 def test_the_top_level_holds_what_the_customer_fixed():
     listed = subprocess.run(
-        ["git", "ls-files"], cwd=ROOT, capture_output=True, text=True, check=False
+        [shutil.which("git"), "ls-files"], cwd=ROOT, capture_output=True, text=True, check=False
     ).stdout.splitlines()
     top = {line.partition("/")[0] for line in listed if not line.startswith(".")}
 

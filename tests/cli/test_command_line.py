@@ -154,9 +154,8 @@ def test_starter_of_each_kind_can_be_assessed_as_it_is(kind, tmp_path):
 
 
 def test_reader_that_leaves_early_is_no_error():
-    with subprocess.Popen(
-        [sys.executable, "-m", "spinhazard", "rules"], cwd=ROOT, stdout=subprocess.PIPE, stderr=subprocess.PIPE
-    ) as process:
+    command = [sys.executable, "-m", "spinhazard", "rules"]
+    with subprocess.Popen(command, cwd=ROOT, stdout=subprocess.PIPE, stderr=subprocess.PIPE) as process:
         process.stdout.readline()
         process.stdout.close()
         complaints = process.stderr.read().decode()

@@ -46,7 +46,7 @@ def test_value_table_carries_source_note_and_calibration():
     file = read(
         SMALLEST.replace(
             'mass = "10 kg"',
-            'mass = { value = "10 kg ± 2 %", source = "weighed", note = "scale 17", instrument = "scale 17", calibration_due = 2026-12-31 }',
+            'mass = { value = "10 kg ± 2 %", source = "weighed", instrument = "scale 17", calibration_due = 2026-12-31 }',
         )
     )
     mass = file.shafts[0].parts[0].mass
@@ -136,7 +136,7 @@ def test_policy_names_what_it_does_not_know(tmp_path):
     path.write_text('format = 1\nname = "North"\nwait_margin = 1.5\nfigures = "us"\nenergy_review_levle = "2 kJ"\n')
 
     with pytest.raises(
-        InputError, match='line 5, energy_review_levle: no such field here.*Nearest: "energy_review_level"'
+        InputError, match=r'line 5, energy_review_levle: no such field here.*Nearest: "energy_review_level"'
     ):
         read_policy(path)
 
