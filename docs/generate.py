@@ -10,8 +10,6 @@ import subprocess
 import sys
 from pathlib import Path
 
-from spinhazard.selfcheck.runner import run_all
-
 from spinhazard.assessment import equation_of
 from spinhazard.cli.app import app
 from spinhazard.cli.rules import in_words
@@ -20,6 +18,7 @@ from spinhazard.mechanics.formula import REGISTRY, printed
 from spinhazard.quantity.units import KINDS, UNIT_NAMES
 from spinhazard.rules.loading import shipped_catalogue
 from spinhazard.rules.rule import Rule
+from spinhazard.selfcheck.runner import run_all
 from spinhazard.sources import citation, load_sources
 
 FOLDER = Path(__file__).parent / "generated"

@@ -252,10 +252,11 @@ def disk_windage_torque(density: ArrayLike, speed: ArrayLike, *, radius: ArrayLi
     7.949
     """  # noqa: DOC502
     number = reynolds_number(density, speed, radius=radius, viscosity=viscosity)
-    with np.errstate(divide="ignore"):
-        coefficient = np.where(number < LAMINAR_LIMIT, 3.87 * number**-0.5, 0.146 * number**-0.2)
     pressure = 0.5 * np.asarray(density, dtype=np.float64) * np.asarray(speed, dtype=np.float64) ** 2
-    return np.where(number == 0.0, 0.0, coefficient * pressure * np.asarray(radius, dtype=np.float64) ** 5)
+    with np.errstate(divide="ignore", invalid="ignore"):
+        coefficient = np.where(number < LAMINAR_LIMIT, 3.87 * number**-0.5, 0.146 * number**-0.2)
+        torque = coefficient * pressure * np.asarray(radius, dtype=np.float64) ** 5
+    return np.where(number == 0.0, 0.0, torque)
 
 
 @formula(
