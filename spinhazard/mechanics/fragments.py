@@ -219,7 +219,7 @@ _PERFORATION: float = 672.0 * _FOOT_POUND ** (2.0 / 3.0) / _INCH**2  # T[in] = E
 
 
 @formula(
-    equation="T = E**(2/3)/(1275957.35*D)", unit="m", symbols={"energy": "E", "diameter": "D"}, source="bc-top-9a §2"
+    equation="T = E**(2/3)/(1275957.16*D)", unit="m", symbols={"energy": "E", "diameter": "D"}, source="bc-top-9a §2"
 )
 def perforation_thickness(energy: ArrayLike, diameter: ArrayLike) -> Array:
     """Thickness of steel plate that a piece just perforates, Ballistic Research Laboratory form.
