@@ -17,6 +17,8 @@ from spinhazard.quantity.stated import Stated
 from spinhazard.statement.policy import Spreads
 
 Samples = NDArray[np.float64]
+SOURCE = "jcgm-101 clauses 6 and 7"
+"""Where the method is from."""
 
 
 class Sampler:

@@ -12,6 +12,7 @@ from pathlib import Path
 
 import pytest
 
+from spinhazard import sampling
 from spinhazard.facts import FACTS
 from spinhazard.mechanics import formula as formulas
 from spinhazard.rules.loading import shipped_catalogue
@@ -120,6 +121,7 @@ def test_documented_parameters_are_really_compared():
 
 
 def references():
+    yield sampling.SOURCE
     yield from (formula.source for formula in formulas.REGISTRY.values())
     yield from (part for declaration in FACTS.values() for part in declaration.source.split("; ") if part)
     yield from (basis for rule in shipped_catalogue().rules for basis in rule.basis)

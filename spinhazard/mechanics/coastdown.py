@@ -99,7 +99,7 @@ def _phi(z: Array, one_plus_z: Array) -> Array:
 @formula(
     equation="see method: coastdown",
     unit="rad/s",
-    symbols={"time": "t", **_SYMBOLS},
+    symbols={"time": "t"} | {name: symbol for name, symbol in _SYMBOLS.items() if name != "end_speed"},
     source="spinhazard-methods coastdown",
 )
 def speed_after(

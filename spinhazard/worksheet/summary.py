@@ -6,6 +6,8 @@ from reportlab.platypus import Flowable, Spacer, Table
 
 from spinhazard.facts.fact import Fact
 from spinhazard.rules.rule import OUTCOMES, URGENCIES
+from spinhazard.sampling import SOURCE
+from spinhazard.sources import citation
 from spinhazard.worksheet.page import Sheet, heading
 from spinhazard.worksheet.style import BODY, FIGURE, FIGURE_BOX, LABEL
 from spinhazard.worksheet.text import paragraph, shares, table
@@ -98,7 +100,7 @@ def _counts(sheet: Sheet) -> str:
     if sheet.assessment.draws:
         share = f"{100 * sheet.assessment.policy.coverage:g} %"
         return (
-            text
-            + f"Figures under a value are the ends of its {share} interval ({sheet.assessment.draws} draws from the stated spreads)."
+            text + f"Figures under a value are the ends of its {share} interval ({sheet.assessment.draws} draws from "
+            f"the stated spreads; {citation(SOURCE)})."
         )
     return text + "Best estimate only; the stated spreads were left out."
