@@ -37,17 +37,17 @@ def _worked_out(sheet: FactSheet, case: str) -> dict[str, Samples]:
 @fact(per="stop", unit="J", symbol="Q", formulas=[braking.brake_heat], equation="Q = Σ T_brake θ_braked")
 def brake_heat(sheet: FactSheet, stop: Subject) -> Samples | None:
     """Heat into all brakes during one stop: the energy of the rotor less the work of the drag."""
-    if sheet.file.stopping is None or not brakes_of(sheet, stop.entity):
+    if sheet.file.stopping is None or not sheet.file.stopping.brakes:
         return None
-    return total_of(list(_heats(sheet, stop.entity).values()))
+    return total_of([NONE, *_heats(sheet, stop.entity).values()])
 
 
 @fact(per="stop", unit="K", symbol="ΔT", formulas=[braking.temperature_rise])
 def brake_temperature_rise(sheet: FactSheet, stop: Subject) -> Samples | None:
     """Temperature rise of the hottest drum or disc in one stop, all heat staying in it (an upper bound)."""
-    if sheet.file.stopping is None or not brakes_of(sheet, stop.entity):
+    if sheet.file.stopping is None or not sheet.file.stopping.brakes:
         return None
-    rises = []
+    rises = [NONE]
     heats = _heats(sheet, stop.entity)
     for brake in brakes_of(sheet, stop.entity):
         path = f"stopping.brake.{brake.id}"
@@ -65,14 +65,14 @@ def brake_temperature_rise(sheet: FactSheet, stop: Subject) -> Samples | None:
 
 
 @fact(per="stop", unit="K", symbol="ΔT_lim", source="policy")
-def temperature_rise_limit(sheet: FactSheet, stop: Subject) -> Samples | None:
-    """Smallest temperature rise allowed for a brake of this stop: as stated, or the policy's."""
-    if sheet.file.stopping is None or not brakes_of(sheet, stop.entity):
+def temperature_rise_limit(sheet: FactSheet, _stop: Subject) -> Samples | None:
+    """Smallest temperature rise allowed for any of the brakes: as stated, or the policy's."""
+    if sheet.file.stopping is None or not sheet.file.stopping.brakes:
         return None
     limits = [
         sheet.policy("brake_temperature_rise_limit") if brake.max_temperature_rise is None
         else sheet.draw(f"stopping.brake.{brake.id}.max_temperature_rise", brake.max_temperature_rise)
-        for brake in brakes_of(sheet, stop.entity)
+        for brake in sheet.file.stopping.brakes
     ]  # fmt: skip
     return smallest(limits)
 
@@ -80,9 +80,9 @@ def temperature_rise_limit(sheet: FactSheet, stop: Subject) -> Samples | None:
 @fact(per="stop", symbol="Q/Q_rated", equation="max(Q / Q_rated)", source="practice")
 def brake_rating_use(sheet: FactSheet, stop: Subject) -> Samples | None:
     """Heat of one stop over the brake's energy rating, for the brake that is nearest to it."""
-    if sheet.file.stopping is None or not brakes_of(sheet, stop.entity):
+    if sheet.file.stopping is None or not sheet.file.stopping.brakes:
         return None
-    shares = []
+    shares = [NONE]
     heats = _heats(sheet, stop.entity)
     for brake in brakes_of(sheet, stop.entity):
         path = f"stopping.brake.{brake.id}.energy_rating"

@@ -18,12 +18,12 @@ if TYPE_CHECKING:
 Dimension = tuple[int, int, int, int]  # powers of length, mass, time, temperature
 
 UNIT_NAMES: dict[str, str] = {
-    "m": "meter", "cm": "centimeter", "mm": "millimeter", "um": "micrometer", "µm": "micrometer", "μm": "micrometer",
+    "m": "meter", "dm": "decimeter", "cm": "centimeter", "mm": "millimeter", "um": "micrometer", "µm": "micrometer", "μm": "micrometer",
     "km": "kilometer", "in": "inch", "inch": "inch", "inches": "inch", "ft": "foot", "mil": "thou", "thou": "thou",
     "yd": "yard", "mile": "mile",
     "kg": "kilogram", "g": "gram", "mg": "milligram", "t": "metric_ton", "lb": "pound", "lbs": "pound", "oz": "ounce",
     "slug": "slug",
-    "s": "second", "sec": "second", "ms": "millisecond", "min": "minute", "h": "hour", "hr": "hour", "d": "day",
+    "s": "second", "sec": "second", "ms": "millisecond", "us": "microsecond", "µs": "microsecond", "min": "minute", "h": "hour", "hr": "hour", "d": "day",
     "N": "newton", "kN": "kilonewton", "MN": "meganewton", "mN": "millinewton", "lbf": "force_pound",
     "ozf": "force_ounce", "kgf": "kilogram_force", "kp": "kilogram_force", "kip": "kip",
     "J": "joule", "kJ": "kilojoule", "MJ": "megajoule", "Wh": "watt_hour", "kWh": "kilowatt_hour", "BTU": "Btu",

@@ -12,6 +12,8 @@ from typing import Any
 from spinhazard.statement.fields import Fault
 from spinhazard.statement.lines import Path
 
+MOST_PARTS = 500
+"""Parts in one file; a machine of sixty is a large one, and every fact of a part carries thousands of draws."""
 Found = Iterator[tuple[Path, Fault]]
 
 
@@ -37,6 +39,8 @@ def reference_faults(raw: dict[str, Any]) -> Found:
         if isinstance(driver, str) and driver not in names:
             yield ("shaft", index, "driven_by"), _unknown(driver, names)
     yield from _circles(shafts)
+    if sum(len(_entries(shaft.get("part"))) for _, shaft in shafts) > MOST_PARTS:
+        yield ("shaft",), Fault("too many parts", accepted=f"at most {MOST_PARTS} parts in one file")
     guards = _entries(raw.get("guard"))
     yield from _twice(("guard",), guards)
     for index, guard in guards:

@@ -161,3 +161,10 @@ def test_missing_file_is_named_with_its_neighbour(tmp_path):
 
     with pytest.raises(InputError, match=r"no such file.*fan\.toml"):
         read_assessment(Path(tmp_path / "fna.toml"))
+
+
+def test_file_with_a_thousand_parts_is_refused_before_anything_is_drawn():
+    parts = "".join('[[shaft.part]]\nshape = "disk"\ndiameter = "1 m"\nmass = "1 kg"\n' for _ in range(1000))
+
+    with pytest.raises(InputError, match="too many"):
+        read(SMALLEST + parts)
