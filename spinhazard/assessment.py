@@ -16,12 +16,14 @@ from spinhazard.facts import FACTS
 from spinhazard.facts.consistency import contradictions
 from spinhazard.facts.fact import Fact
 from spinhazard.facts.sheet import FactSheet
+from spinhazard.mechanics.coastfit import CoastFit, fit_coast
 from spinhazard.mechanics.formula import printed
 from spinhazard.quantity.display import System
 from spinhazard.rules.engine import Finding, findings
 from spinhazard.rules.loading import Catalogue, shipped_catalogue
 from spinhazard.rules.rule import NEEDS_ATTENTION
 from spinhazard.sampling import Sampler, interval
+from spinhazard.statement.fields import Fault
 from spinhazard.statement.machine import AssessmentFile
 from spinhazard.statement.policy import Policy
 from spinhazard.statement.reading import Reading, complaint_about
@@ -163,12 +165,12 @@ def assess(
     policy = policy or shipped_policy()
     catalogue = catalogue or shipped_catalogue()
     digests = {
-        "inputs": _digest(reading.text),
+        "inputs": _digest(reading.text if reading.log is None else f"{reading.text}\n{reading.log.digest}"),
         "catalogue": catalogue.digest,
         "policy": _digest(policy.as_text()),
     }
     draws = 0 if best_estimate else policy.draws
-    sheet = FactSheet(reading.file, policy, Sampler(digests["inputs"], draws, policy.spreads))
+    sheet = FactSheet(reading.file, policy, Sampler(digests["inputs"], draws, policy.spreads), coast_of(reading))
     # NaN stands for a missing value and infinity for a stop that never ends; both are meant
     with np.errstate(invalid="ignore", divide="ignore", over="ignore"):
         _refuse_contradictions(reading, sheet)
@@ -184,6 +186,35 @@ def assess(
         draws=draws,
         program=program_name(),
     )
+
+
+def coast_of(reading: Reading) -> CoastFit | None:
+    """Fit of the coast-down log that a file names.
+
+    Parameters
+    ----------
+    reading : Reading
+        The statement.
+
+    Returns
+    -------
+    CoastFit or None
+        None where it names none.
+
+    Raises
+    ------
+    InputError
+        There is no coast in the log.
+    """
+    if reading.log is None:
+        return None
+    try:
+        return fit_coast(reading.log.time, reading.log.speed)
+    except ValueError as error:
+        fault = Fault(
+            str(error), stated=reading.log.name, accepted="a log in which the rotor coasts down from its speed"
+        )
+        raise InputError(complaint_about(reading, "stopping.coastdown_log", fault)) from None
 
 
 def _refuse_contradictions(reading: Reading, sheet: FactSheet) -> None:

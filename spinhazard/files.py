@@ -52,26 +52,51 @@ def read_text(path: Path, *, limit: int = ASSESSMENT_FILE_LIMIT, what: str = "an
     return text
 
 
-def _read_bytes(path: Path, *, limit: int, what: str) -> bytes:
+def check_readable(path: Path, *, limit: int, what: str) -> None:
+    """Refuse a file that another reader is going to open: missing, no regular file, or too large.
+
+    Parameters
+    ----------
+    path : Path
+        File to be read.
+    limit : int
+        Largest size accepted [bytes].
+    what : str
+        What the file should be, for the message.
+
+    Raises
+    ------
+    InputError
+        The file is missing, a folder, unreadable, or too large.
+    """
     try:
-        kind = path.stat().st_mode
-        if stat.S_ISDIR(kind):
+        about = path.stat()
+        if stat.S_ISDIR(about.st_mode):
             raise InputError(Complaint("this is a folder", file=str(path), accepted=what))
-        if not stat.S_ISREG(kind):
+        if not stat.S_ISREG(about.st_mode):
             raise InputError(Complaint("this is not a regular file", file=str(path), accepted=what))
-        with path.open("rb") as stream:
-            data = stream.read(limit + 1)
+        path.open("rb").close()
     except FileNotFoundError:
         raise InputError(_no_such_file(path, what)) from None
     except (OSError, ValueError) as error:
         reason = getattr(error, "strerror", None) or str(error)
         raise InputError(Complaint(f"cannot be read ({reason})", file=str(path), accepted=what)) from None
-    if len(data) > limit:
-        raise InputError(
-            Complaint(
-                f"larger than {limit:,} bytes".replace(",", " "), file=str(path), accepted=f"{what} below that size"
-            )
-        )
+    if about.st_size > limit:
+        raise InputError(_too_large(path, limit, what))
+
+
+def _too_large(path: Path, limit: int, what: str) -> Complaint:
+    return Complaint(
+        f"larger than {limit:,} bytes".replace(",", " "), file=str(path), accepted=f"{what} below that size"
+    )
+
+
+def _read_bytes(path: Path, *, limit: int, what: str) -> bytes:
+    check_readable(path, limit=limit, what=what)
+    with path.open("rb") as stream:
+        data = stream.read(limit + 1)
+    if len(data) > limit:  # it has grown since
+        raise InputError(_too_large(path, limit, what))
     return data
 
 

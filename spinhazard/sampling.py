@@ -85,6 +85,30 @@ class Sampler:
             drawn[1:] = _positive_normal(generator, stated.value, half_width / stated.coverage_factor, self.draws)
         return drawn
 
+    def correlated(self, path: str, best: Samples, covariance: Samples) -> tuple[Samples, ...]:
+        """Best estimates and draws of quantities that were fitted together.
+
+        Parameters
+        ----------
+        path : str
+            Path of the value they were fitted to.
+        best : ndarray, shape (k,)
+            Best estimates, none below zero.
+        covariance : ndarray, shape (k, k)
+            Their covariance.
+
+        Returns
+        -------
+        tuple of ndarray
+            Samples of each; draws below zero are taken as zero, the bound of the fit.
+        """
+        if self.draws == 0:
+            return tuple(np.array([value]) for value in best)
+        key = int.from_bytes(hashlib.sha256(f"{self._seed}|{path}".encode()).digest()[:16], "big")
+        generator = np.random.Generator(np.random.Philox(key=key))
+        drawn = np.maximum(generator.multivariate_normal(best, covariance, self.draws, method="eigh"), 0.0)
+        return tuple(np.concatenate([[value], column]) for value, column in zip(best, drawn.T, strict=True))
+
 
 def _positive_normal(generator: np.random.Generator, mean: float, deviation: float, count: int) -> Samples:
     """Normal draws; no stated quantity here can be negative, so a draw that is gets drawn again."""

@@ -24,6 +24,8 @@ JsonPath = Annotated[
     Path | None, typer.Option("--json", metavar="PATH", help="Write the result as JSON; - for standard output.")
 ]
 
+AssessmentPath = Annotated[Optional[Path], typer.Option(metavar="FILE", help="Merge into its stopping table.")]  # noqa: UP045
+
 
 @app.callback(invoke_without_command=True)
 def _root(
@@ -82,6 +84,31 @@ def assess(
 
     outputs = command.Outputs(pdf=pdf, json=json, paper=paper, overwrite=overwrite)
     command.run(files, outputs, policy_file=policy, system=_system(units), best_estimate=best_estimate)
+
+
+@app.command()
+def coastdown(  # noqa: PLR0913  (one argument for each option)
+    logs: Annotated[list[Path], typer.Argument(metavar="LOG…", help="Tachometer logs (CSV) of the same rotor.")],
+    *,
+    time_column: Annotated[str, typer.Option(metavar="NAME", help="Column of the time.")] = "",
+    speed_column: Annotated[str, typer.Option(metavar="NAME", help="Column of the speed.")] = "",
+    time_unit: Annotated[str, typer.Option(metavar="UNIT", help="Unit of the time, where the head has none.")] = "",
+    speed_unit: Annotated[str, typer.Option(metavar="UNIT", help="Unit of the speed, where the head has none.")] = "",
+    inertia: Annotated[str, typer.Option(metavar="TEXT", help='Inertia at the shaft of the log, "1.9 kg m2".')] = "",
+    start: Annotated[list[str], typer.Option("--from", metavar="SPEED", help="Predict the stop from this speed.")] = [],  # noqa: B006
+    standstill: Annotated[
+        str, typer.Option(metavar="SPEED", help="Speed below which the shaft counts as stopped.")
+    ] = "",
+    into: AssessmentPath = None,
+    json: JsonPath = None,
+    overwrite: Overwrite = False,
+) -> None:
+    """Fit dry friction, viscous drag and windage to coast-down logs; predict stops from other speeds."""
+    from spinhazard.cli import coastdown as command  # noqa: PLC0415
+    from spinhazard.statement.tachometer_log import LogOptions  # noqa: PLC0415
+
+    options = LogOptions(time_column, speed_column, time_unit, speed_unit)
+    command.run(logs, options, command.Wanted(inertia, tuple(start), standstill, into, json, overwrite))
 
 
 @app.command()

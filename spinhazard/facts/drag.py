@@ -138,8 +138,36 @@ def drag_is_stated(sheet: FactSheet) -> bool:
     stopping = sheet.file.stopping
     if stopping is None:
         return False
+    if stopping.coastdown_log is not None:
+        return True
     coefficients = (stopping.friction_torque, stopping.viscous, stopping.windage)
     return bool(stopping.loss_power) or any(value is not None for value in coefficients)
+
+
+def _over_inertia(sheet: FactSheet, place: int) -> Samples | None:
+    """One of a/J, b/J, c/J from the coast-down log; None where there is none."""
+    if sheet.coast is None:
+        return None
+    sheet.note("stopping.coastdown_log")
+    return sheet.fitted("stopping.coastdown_log", sheet.coast.value, sheet.coast.covariance)[place]
+
+
+@fact(per="machine", unit="rad/s²", symbol="a/J", equation="see method: coastfit", source="spinhazard-methods coastfit")
+def constant_over_inertia(sheet: FactSheet, _machine: Subject) -> Samples | None:
+    """Dry friction over inertia, fitted to the coast-down log."""
+    return _over_inertia(sheet, 0)
+
+
+@fact(per="machine", unit="1/s", symbol="b/J", equation="see method: coastfit", source="spinhazard-methods coastfit")
+def linear_over_inertia(sheet: FactSheet, _machine: Subject) -> Samples | None:
+    """Viscous drag over inertia, fitted to the coast-down log."""
+    return _over_inertia(sheet, 1)
+
+
+@fact(per="machine", unit="1/rad", symbol="c/J", equation="see method: coastfit", source="spinhazard-methods coastfit")
+def quadratic_over_inertia(sheet: FactSheet, _machine: Subject) -> Samples | None:
+    """Windage over inertia, fitted to the coast-down log."""
+    return _over_inertia(sheet, 2)
 
 
 def _coast_is_measured(sheet: FactSheet) -> bool:
@@ -156,10 +184,13 @@ def _coast_is_measured(sheet: FactSheet) -> bool:
 
 @fact(
     per="machine", unit="N m", symbol="a", formulas=[drag.torque_from_power, drag.friction_from_stop_time],
-    equation="a = stated + Σ P/ω; of measured coast alone: a = J_r ω₀/t",
+    equation="a = stated + Σ P/ω; of a log: a = (a/J) J_r; of measured coast alone: a = J_r ω₀/t",
 )  # fmt: skip
 def constant_drag(sheet: FactSheet, _machine: Subject) -> Samples:
     """Part of the drag torque that does not depend on speed."""
+    fitted = sheet.where_applies("constant_over_inertia")
+    if fitted is not None:
+        return fitted * sheet("referred_inertia")
     if drag_is_stated(sheet):
         total = stated_or_zero(sheet, "friction_torque")
         for power, speed in _losses(sheet, "constant torque"):
@@ -178,18 +209,36 @@ def constant_drag(sheet: FactSheet, _machine: Subject) -> Samples:
     return sheet.missing("stopping.friction_torque")
 
 
-@fact(per="machine", unit="N m s", symbol="b", formulas=[drag.linear_drag_from_power], equation="b = stated + Σ P/ω²")
+@fact(
+    per="machine",
+    unit="N m s",
+    symbol="b",
+    formulas=[drag.linear_drag_from_power],
+    equation="b = stated + Σ P/ω²; of a log: b = (b/J) J_r",
+)
 def linear_drag(sheet: FactSheet, _machine: Subject) -> Samples:
     """Part of the drag torque that grows with speed, per rad/s."""
+    fitted = sheet.where_applies("linear_over_inertia")
+    if fitted is not None:
+        return fitted * sheet("referred_inertia")
     total = stated_or_zero(sheet, "viscous")
     for power, speed in _losses(sheet, "viscous"):
         total = total + sheet.apply(drag.linear_drag_from_power, power, speed)
     return total
 
 
-@fact(per="machine", unit="N m s²", symbol="c", formulas=[drag.fan_drag_from_power], equation="c = stated + Σ P/ω³")
+@fact(
+    per="machine",
+    unit="N m s²",
+    symbol="c",
+    formulas=[drag.fan_drag_from_power],
+    equation="c = stated + Σ P/ω³; of a log: c = (c/J) J_r",
+)
 def quadratic_drag(sheet: FactSheet, _machine: Subject) -> Samples:
     """Part of the drag torque that grows with speed squared, per (rad/s)²."""
+    fitted = sheet.where_applies("quadratic_over_inertia")
+    if fitted is not None:
+        return fitted * sheet("referred_inertia")
     total = stated_or_zero(sheet, "windage")
     for power, speed in _losses(sheet, "fan"):
         total = total + sheet.apply(drag.fan_drag_from_power, power, speed)

@@ -13,6 +13,7 @@ import numpy as np
 
 from spinhazard.facts.fact import FACTS, Fact, FactValue, Step, Word
 from spinhazard.facts.subject import Subject, Subjects, subjects_of
+from spinhazard.mechanics.coastfit import CoastFit
 from spinhazard.mechanics.formula import record
 from spinhazard.quantity.stated import Stated
 from spinhazard.sampling import Sampler, Samples
@@ -56,10 +57,13 @@ class FactSheet:
         The site's policy.
     sampler : Sampler
         Source of the sample axis.
+    coast : CoastFit, optional
+        Fit of the coast-down log that the file names.
     """
 
-    def __init__(self, file: AssessmentFile, policy: Policy, sampler: Sampler) -> None:
+    def __init__(self, file: AssessmentFile, policy: Policy, sampler: Sampler, coast: CoastFit | None = None) -> None:
         self.file = file
+        self.coast = coast
         self.rules = policy
         self.subjects: Subjects = subjects_of(file)
         self.by_name = {subject.name: subject for subject in self.subjects.all()}
@@ -295,6 +299,25 @@ class FactSheet:
         else:
             self._frames[-1].asked.append(path)
         return found
+
+    def fitted(self, path: str, best: Samples, covariance: Samples) -> tuple[Samples, ...]:
+        """Samples of quantities that were fitted together.
+
+        Parameters
+        ----------
+        path : str
+            Path of the value they were fitted to.
+        best : ndarray, shape (k,)
+            Best estimates.
+        covariance : ndarray, shape (k, k)
+            Their covariance.
+
+        Returns
+        -------
+        tuple of ndarray
+            Samples of each.
+        """
+        return self.shared(f"fit of {path}", lambda: self._sampler.correlated(path, best, covariance))
 
     def missing(self, *paths: str) -> Samples:
         """Record that fields are needed and not stated.

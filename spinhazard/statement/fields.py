@@ -86,6 +86,22 @@ Identifier = Annotated[
 ]
 
 
+def _file_name(value: str) -> str:
+    if value in {".", ".."} or any(mark in value for mark in "/\\:") or value.startswith("~"):
+        raise Fault(
+            "not the name of a file beside this one", stated=value, accepted="a plain file name, without folders"
+        )
+    return value
+
+
+FileName = Annotated[
+    str,
+    StringConstraints(strict=True, min_length=1, max_length=200),
+    AfterValidator(plain_text),
+    AfterValidator(_file_name),
+]
+
+
 def _day(value: Any) -> Any:
     if isinstance(value, datetime) or not isinstance(value, (date, str)):
         raise Fault("not a date", stated=value, accepted="a date such as 2026-11-20")

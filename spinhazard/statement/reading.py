@@ -21,6 +21,7 @@ from spinhazard.statement.machine import AssessmentFile
 from spinhazard.statement.policy import Policy
 from spinhazard.statement.references import reference_faults
 from spinhazard.statement.rotor import SHAPES
+from spinhazard.statement.tachometer_log import TachometerLog, read_log
 
 MOST_COMPLAINTS = 50
 ModelType = TypeVar("ModelType", bound=Model)
@@ -34,6 +35,7 @@ class Reading:
     text: str
     name: str
     folder: Path
+    log: TachometerLog | None = None
 
 
 def read_assessment(path: Path) -> Reading:
@@ -94,7 +96,10 @@ def assessment_from_text(text: str, *, name: str, folder: Path = Path()) -> Read
         complaints += [_complaint(fault, path, raw, nearest_line(lines, path), name) for path, fault in faults]
     if complaints or file is None:
         raise InputError(_in_order(complaints))
-    return Reading(file=file, text=text, name=name, folder=folder)
+    log = None
+    if file.stopping is not None and file.stopping.coastdown_log is not None:
+        log = read_log(folder / file.stopping.coastdown_log)
+    return Reading(file=file, text=text, name=name, folder=folder, log=log)
 
 
 def read_policy(path: Path) -> tuple[Policy, str]:

@@ -12,6 +12,7 @@ from spinhazard.statement.fields import (
     Day,
     Energy,
     Fault,
+    FileName,
     Identifier,
     Mass,
     Model,
@@ -64,6 +65,7 @@ class Stopping(Model):
         None, description="part of the drag torque that grows with speed squared, per (rad/s)²"
     )
     loss_power: tuple[LossPower, ...] = Field((), max_length=20, description="power lost at a known speed")
+    coastdown_log: FileName | None = Field(None, description="tachometer log of a coast, a file beside this one")
     measured_times: tuple[Time, ...] = Field(
         (), max_length=1000, description="measured stops, each from command to standstill"
     )
@@ -77,6 +79,17 @@ class Stopping(Model):
     )
     control_delay: TimeOrZero | None = Field(None, description="time the drive keeps driving after the stop command")
     brakes: tuple[Brake, ...] = Field((), alias="brake", max_length=20, description="brakes")
+
+    @model_validator(mode="after")
+    def _one_source_of_drag(self) -> Self:
+        stated = [name for name in ("friction_torque", "viscous", "windage") if getattr(self, name) is not None]
+        stated += ["loss_power"] if self.loss_power else []
+        if self.coastdown_log is not None and stated:
+            raise Fault(
+                f"stands beside {', '.join(stated)}", field="coastdown_log", stated=self.coastdown_log,
+                accepted="either a log, which gives the whole drag, or stated drag",
+            )  # fmt: skip
+        return self
 
     @model_validator(mode="after")
     def _brake_names_differ(self) -> Self:

@@ -75,7 +75,9 @@ def _best_speeds(sheet: Sheet, case: str, times: Samples) -> Samples:
     from spinhazard.sampling import Sampler  # noqa: PLC0415
 
     assessment = sheet.assessment
-    best = FactSheet(assessment.file, assessment.policy, Sampler("", 0, assessment.policy.spreads))
+    best = FactSheet(
+        assessment.file, assessment.policy, Sampler("", 0, assessment.policy.spreads), assessment.sheet.coast
+    )
     return np.asarray(speed_at(best, case, times), dtype=np.float64)
 
 
