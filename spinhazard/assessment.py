@@ -15,9 +15,10 @@ from spinhazard.errors import InputError
 from spinhazard.facts import FACTS
 from spinhazard.facts.consistency import contradictions
 from spinhazard.facts.fact import Fact
-from spinhazard.facts.sheet import FactSheet
+from spinhazard.facts.sheet import Beside, FactSheet
 from spinhazard.mechanics.coastfit import CoastFit, fit_coast
 from spinhazard.mechanics.formula import printed
+from spinhazard.mechanics.mesh import mesh_moments
 from spinhazard.quantity.display import System
 from spinhazard.rules.engine import Finding, findings
 from spinhazard.rules.loading import Catalogue, shipped_catalogue
@@ -27,6 +28,7 @@ from spinhazard.statement.fields import Fault
 from spinhazard.statement.machine import AssessmentFile
 from spinhazard.statement.policy import Policy
 from spinhazard.statement.reading import Reading, complaint_about
+from spinhazard.statement.rotor import Mesh
 
 
 @dataclass(frozen=True)
@@ -165,12 +167,12 @@ def assess(
     policy = policy or shipped_policy()
     catalogue = catalogue or shipped_catalogue()
     digests = {
-        "inputs": _digest(reading.text if reading.log is None else f"{reading.text}\n{reading.log.digest}"),
+        "inputs": _digest("\n".join((reading.text, *reading.digests))),
         "catalogue": catalogue.digest,
         "policy": _digest(policy.as_text()),
     }
     draws = 0 if best_estimate else policy.draws
-    sheet = FactSheet(reading.file, policy, Sampler(digests["inputs"], draws, policy.spreads), coast_of(reading))
+    sheet = FactSheet(reading.file, policy, Sampler(digests["inputs"], draws, policy.spreads), _beside(reading))
     # NaN stands for a missing value and infinity for a stop that never ends; both are meant
     with np.errstate(invalid="ignore", divide="ignore", over="ignore"):
         _refuse_contradictions(reading, sheet)
@@ -186,6 +188,25 @@ def assess(
         draws=draws,
         program=program_name(),
     )
+
+
+def _beside(reading: Reading) -> Beside:
+    """Fit the log and measure the meshes that a file names."""
+    meshes = {}
+    for shaft in reading.file.shafts:
+        for part in shaft.parts:
+            if isinstance(part, Mesh):
+                path = f"shaft.{shaft.id}.part.{part.id}"
+                try:
+                    meshes[path] = mesh_moments(reading.meshes[part.file].corners, part.axis)
+                except ValueError as error:
+                    fault = Fault(
+                        str(error),
+                        stated=part.file,
+                        accepted="a closed surface, its triangles turning left seen from outside",
+                    )
+                    raise InputError(complaint_about(reading, f"{path}.file", fault)) from None
+    return Beside(coast_of(reading), meshes)
 
 
 def coast_of(reading: Reading) -> CoastFit | None:

@@ -146,10 +146,10 @@ def drag_is_stated(sheet: FactSheet) -> bool:
 
 def _over_inertia(sheet: FactSheet, place: int) -> Samples | None:
     """One of a/J, b/J, c/J from the coast-down log; None where there is none."""
-    if sheet.coast is None:
+    if sheet.beside.coast is None:
         return None
     sheet.note("stopping.coastdown_log")
-    return sheet.fitted("stopping.coastdown_log", sheet.coast.value, sheet.coast.covariance)[place]
+    return sheet.fitted("stopping.coastdown_log", sheet.beside.coast.value, sheet.beside.coast.covariance)[place]
 
 
 @fact(per="machine", unit="rad/s²", symbol="a/J", equation="see method: coastfit", source="spinhazard-methods coastfit")

@@ -8,7 +8,7 @@ from spinhazard.facts.fact import Word, fact
 from spinhazard.facts.shapes import INERTIA, TIP_RADIUS, VOLUME
 from spinhazard.facts.sheet import FactSheet
 from spinhazard.facts.subject import Subject
-from spinhazard.mechanics import energy, volume
+from spinhazard.mechanics import energy, pendulum, volume
 from spinhazard.mechanics import inertia as moments
 from spinhazard.sampling import Samples, largest
 from spinhazard.statement.materials import materials
@@ -100,10 +100,26 @@ def mass(sheet: FactSheet, part: Subject) -> Samples:
     return pieces
 
 
+PIECE_FORMULAS = [
+    moments.disk_inertia,
+    moments.sphere_inertia,
+    moments.crossways_rod_inertia,
+    moments.plate_inertia,
+    moments.frustum_inertia,
+    moments.torus_inertia,
+    moments.point_inertia,
+    moments.revolved_inertia,
+    moments.inertia_from_gd2,
+    moments.inertia_from_wk2,
+    pendulum.bifilar_inertia,
+    pendulum.trifilar_inertia,
+    pendulum.falling_weight_inertia,
+]
+
+
 @fact(
     per="part", unit="kg m²", symbol="J₁",
-    formulas=[moments.disk_inertia, moments.sphere_inertia, moments.crossways_rod_inertia, moments.plate_inertia, moments.frustum_inertia,
-              moments.torus_inertia, moments.point_inertia, moments.revolved_inertia, moments.inertia_from_gd2, moments.inertia_from_wk2],
+    formulas=PIECE_FORMULAS,
 )  # fmt: skip
 def piece_inertia(sheet: FactSheet, part: Subject) -> Samples:
     """Moment of inertia of one piece about its own axis parallel to the shaft (of a point: about the shaft)."""
@@ -114,7 +130,28 @@ def piece_inertia(sheet: FactSheet, part: Subject) -> Samples:
         return sheet.apply(moments.inertia_from_gd2, sheet.value(part, "gd2"))
     if stated.wk2 is not None:
         return sheet.apply(moments.inertia_from_wk2, sheet.value(part, "wk2"))
-    return sheet.value(part, "inertia")
+    return _measured_inertia(sheet, part) if stated.inertia is None else sheet.value(part, "inertia")
+
+
+def _measured_inertia(sheet: FactSheet, part: Subject) -> Samples:
+    """From a swing on cords or a falling weight."""
+
+    def of(test: str, quantity: str) -> Samples:
+        return sheet.draw(f"{part.path}.{test}.{quantity}", getattr(getattr(part.entity, test), quantity))
+
+    if part.entity.bifilar is not None:
+        mass, distance = sheet("piece_mass", part), of("bifilar", "distance")
+        return sheet.apply(
+            pendulum.bifilar_inertia, mass, distance, length=of("bifilar", "length"), period=of("bifilar", "period")
+        )
+    if part.entity.trifilar is not None:
+        mass, radius = sheet("piece_mass", part), of("trifilar", "radius")
+        return sheet.apply(
+            pendulum.trifilar_inertia, mass, radius, length=of("trifilar", "length"), period=of("trifilar", "period")
+        )
+    weight, radius = of("falling_weight", "weight"), of("falling_weight", "radius")
+    height, time = of("falling_weight", "height"), of("falling_weight", "time")
+    return sheet.apply(pendulum.falling_weight_inertia, weight, radius, height=height, time=time)
 
 
 @fact(

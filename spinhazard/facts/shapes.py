@@ -12,6 +12,7 @@ import numpy as np
 from spinhazard.facts.sheet import FactSheet
 from spinhazard.facts.subject import Subject
 from spinhazard.mechanics import inertia, outline, volume
+from spinhazard.mechanics.mesh import MeshMoments
 from spinhazard.quantity.units import factor_to_si
 from spinhazard.sampling import Samples
 
@@ -107,7 +108,19 @@ def _profile_volume(sheet: FactSheet, part: Subject) -> Samples:
     return np.atleast_1d(inertia.revolved_volume(radii, heights))
 
 
+def _mesh(sheet: FactSheet, part: Subject) -> tuple[MeshMoments, float]:
+    """Moments of a mesh part and its unit of length [m]."""
+    sheet.note(f"{part.path}.file")
+    return sheet.beside.meshes[part.path], factor_to_si(part.entity.unit, "length")
+
+
+def _mesh_volume(sheet: FactSheet, part: Subject) -> Samples:
+    moments, unit = _mesh(sheet, part)
+    return np.array([moments.volume * unit**3])
+
+
 VOLUME: dict[str, OfPart] = {
+    "mesh": _mesh_volume,
     "disk": _disk_volume,
     "ring": _ring_volume,
     "sphere": _sphere_volume,
@@ -176,7 +189,14 @@ def _point_inertia(sheet: FactSheet, part: Subject, mass: Samples) -> Samples:
     return sheet.apply(inertia.point_inertia, mass, sheet.value(part, "radius"))
 
 
+def _mesh_inertia(sheet: FactSheet, part: Subject, mass: Samples) -> Samples:
+    moments, unit = _mesh(sheet, part)
+    return mass * (moments.second / moments.volume * unit**2)
+
+
 INERTIA: dict[str, OfPiece] = {
+    "mesh": _mesh_inertia,
+    "linear": _point_inertia,
     "disk": _disk_inertia,
     "ring": _ring_inertia,
     "sphere": _sphere_inertia,
@@ -232,7 +252,14 @@ def _stated_tip(sheet: FactSheet, part: Subject) -> Samples:
     return sheet.value(part, "tip_radius")
 
 
+def _mesh_tip(sheet: FactSheet, part: Subject) -> Samples:
+    moments, unit = _mesh(sheet, part)
+    return np.array([moments.tip_radius * unit])
+
+
 TIP_RADIUS: dict[str, OfPart] = {
+    "mesh": _mesh_tip,
+    "linear": _point_tip,
     "disk": _round_tip("diameter"),
     "ring": _round_tip("outer_diameter"),
     "sphere": _round_tip("diameter"),

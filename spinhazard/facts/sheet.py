@@ -6,7 +6,8 @@ fields would settle the fact, and so collects all of them in one go.
 
 from __future__ import annotations
 
-from collections.abc import Callable
+from collections.abc import Callable, Mapping
+from dataclasses import dataclass, field
 from typing import Any, TypeVar
 
 import numpy as np
@@ -15,6 +16,7 @@ from spinhazard.facts.fact import FACTS, Fact, FactValue, Step, Word
 from spinhazard.facts.subject import Subject, Subjects, subjects_of
 from spinhazard.mechanics.coastfit import CoastFit
 from spinhazard.mechanics.formula import record
+from spinhazard.mechanics.mesh import MeshMoments
 from spinhazard.quantity.stated import Stated
 from spinhazard.sampling import Sampler, Samples
 from spinhazard.statement.machine import AssessmentFile
@@ -23,6 +25,22 @@ from spinhazard.statement.policy import Policy
 Result = TypeVar("Result")
 NOT_KNOWN: Samples = np.array([np.nan])
 NOT_KNOWN.flags.writeable = False
+
+
+@dataclass(frozen=True)
+class Beside:
+    """What the files say that an assessment file names.
+
+    Attributes
+    ----------
+    coast : CoastFit or None
+        Fit of the coast-down log.
+    meshes : mapping
+        Moments of each mesh in the unit of its file, by the part's path.
+    """
+
+    coast: CoastFit | None = None
+    meshes: Mapping[str, MeshMoments] = field(default_factory=dict)
 
 
 class _Frame:
@@ -57,13 +75,13 @@ class FactSheet:
         The site's policy.
     sampler : Sampler
         Source of the sample axis.
-    coast : CoastFit, optional
-        Fit of the coast-down log that the file names.
+    beside : Beside, optional
+        What the files beside it say.
     """
 
-    def __init__(self, file: AssessmentFile, policy: Policy, sampler: Sampler, coast: CoastFit | None = None) -> None:
+    def __init__(self, file: AssessmentFile, policy: Policy, sampler: Sampler, beside: Beside | None = None) -> None:
         self.file = file
-        self.coast = coast
+        self.beside = beside or Beside()
         self.rules = policy
         self.subjects: Subjects = subjects_of(file)
         self.by_name = {subject.name: subject for subject in self.subjects.all()}

@@ -19,6 +19,7 @@ from spinhazard.mechanics import (
     fragments,
     inertia,
     outline,
+    pendulum,
     reach,
     strength,
     unbalance,
@@ -29,7 +30,20 @@ from spinhazard.quantity.notation import parse_stated
 
 MODULES = {
     module.__name__.rpartition(".")[2]: module
-    for module in (braking, coastdown, drag, energy, fragments, inertia, outline, reach, strength, unbalance, volume)
+    for module in (
+        braking,
+        coastdown,
+        drag,
+        energy,
+        fragments,
+        inertia,
+        outline,
+        pendulum,
+        reach,
+        strength,
+        unbalance,
+        volume,
+    )
 }
 
 

@@ -5,7 +5,8 @@ from __future__ import annotations
 import difflib
 import re
 import tomllib
-from dataclasses import dataclass
+from collections.abc import Mapping
+from dataclasses import dataclass, field
 from pathlib import Path
 from typing import Any, TypeVar, get_args
 
@@ -20,7 +21,8 @@ from spinhazard.statement.lines import line_numbers, nearest_line
 from spinhazard.statement.machine import AssessmentFile
 from spinhazard.statement.policy import Policy
 from spinhazard.statement.references import reference_faults
-from spinhazard.statement.rotor import SHAPES
+from spinhazard.statement.rotor import SHAPES, Mesh
+from spinhazard.statement.stl import Triangles, read_stl
 from spinhazard.statement.tachometer_log import TachometerLog, read_log
 
 MOST_COMPLAINTS = 50
@@ -36,6 +38,12 @@ class Reading:
     name: str
     folder: Path
     log: TachometerLog | None = None
+    meshes: Mapping[str, Triangles] = field(default_factory=dict)
+
+    @property
+    def digests(self) -> tuple[str, ...]:
+        """SHA-256 of the files that this one names, in the order they are named."""
+        return tuple(found.digest for found in (self.log, *self.meshes.values()) if found is not None)
 
 
 def read_assessment(path: Path) -> Reading:
@@ -99,7 +107,12 @@ def assessment_from_text(text: str, *, name: str, folder: Path = Path()) -> Read
     log = None
     if file.stopping is not None and file.stopping.coastdown_log is not None:
         log = read_log(folder / file.stopping.coastdown_log)
-    return Reading(file=file, text=text, name=name, folder=folder, log=log)
+    return Reading(file=file, text=text, name=name, folder=folder, log=log, meshes=_meshes_of(file, folder))
+
+
+def _meshes_of(file: AssessmentFile, folder: Path) -> dict[str, Triangles]:
+    names = dict.fromkeys(part.file for shaft in file.shafts for part in shaft.parts if isinstance(part, Mesh))
+    return {name: read_stl(folder / name) for name in names}
 
 
 def read_policy(path: Path) -> tuple[Policy, str]:

@@ -12,6 +12,7 @@ from spinhazard.statement.fields import (
     AngularSpeed,
     Density,
     Fault,
+    FileName,
     Gd2,
     Identifier,
     Inertia,
@@ -22,6 +23,7 @@ from spinhazard.statement.fields import (
     Name,
     Ratio,
     Stress,
+    Time,
     Unbalance,
     Wk2,
     finite,
@@ -205,6 +207,58 @@ class Point(PartBase):
     radius: Length = Field(description="distance of the mass from the shaft axis")
 
 
+class Linear(PartBase):
+    """Mass that the shaft moves along a line: a belt, a table, a counterweight on a cord."""
+
+    shape: Literal["linear"]
+    radius: Length = Field(description="radius at which the shaft moves it: speed along the line over rotational speed")
+
+
+class Mesh(PartBase):
+    """Body given by its closed surface; the shaft passes through the origin of the file."""
+
+    shape: Literal["mesh"]
+    file: FileName = Field(description="STL file beside this one")
+    unit: Literal["m", "cm", "mm", "in", "ft"] = Field(description="unit of the STL file")
+    axis: Literal["x", "y", "z"] = Field(description="direction of the shaft in the STL file")
+
+    @model_validator(mode="after")
+    def _stands_where_it_is(self) -> Self:
+        if self.offset is not None and self.offset.value > 0.0:
+            raise Fault(
+                "a mesh stands where its file puts it", field="offset", stated=self.offset.text, accepted="no offset"
+            )
+        return self
+
+
+class Bifilar(Model):
+    """Swing on two parallel cords."""
+
+    distance: Length = Field(description="distance between the two cords")
+    length: Length = Field(description="length of the cords")
+    period: Time = Field(description="time of one full swing")
+
+
+class Trifilar(Model):
+    """Swing on three parallel cords."""
+
+    radius: Length = Field(description="radius of the circle of the cords")
+    length: Length = Field(description="length of the cords")
+    period: Time = Field(description="time of one full swing")
+
+
+class FallingWeight(Model):
+    """Rotor turned from rest by a weight on a cord."""
+
+    weight: Mass = Field(description="mass of the weight")
+    radius: Length = Field(description="radius the cord acts on")
+    height: Length = Field(description="height fallen")
+    time: Time = Field(description="time the fall takes")
+
+
+INERTIAS = ("inertia", "gd2", "wk2", "bifilar", "trifilar", "falling_weight")
+
+
 class StatedInertia(PartBase):
     """Part whose inertia is read from a data sheet or was measured."""
 
@@ -212,21 +266,24 @@ class StatedInertia(PartBase):
     inertia: Inertia | None = Field(None, description="moment of inertia about its own axis")
     gd2: Gd2 | None = Field(None, description="GD² of a data sheet")
     wk2: Wk2 | None = Field(None, description="WK² or WR² of a data sheet")
+    bifilar: Bifilar | None = Field(None, description="measured on two cords")
+    trifilar: Trifilar | None = Field(None, description="measured on three cords")
+    falling_weight: FallingWeight | None = Field(None, description="measured with a falling weight")
     tip_radius: Length | None = Field(None, description="distance of the outermost point from the shaft axis")
 
     @model_validator(mode="after")
     def _one_inertia(self) -> Self:
-        stated = [name for name in ("inertia", "gd2", "wk2") if getattr(self, name) is not None]
+        stated = [name for name in INERTIAS if getattr(self, name) is not None]
         if len(stated) != 1:
             raise Fault(
                 "states no inertia" if not stated else f"states {' and '.join(stated)}", field="inertia",
-                accepted="exactly one of inertia, gd2, wk2",
+                accepted="exactly one of " + ", ".join(INERTIAS),
             )  # fmt: skip
         return self
 
 
 Part = Annotated[
-    Union[Disk, Ring, Sphere, Rod, Plate, Cone, Torus, Profile, Point, StatedInertia],  # noqa: UP007  (get_args below)
+    Union[Disk, Ring, Sphere, Rod, Plate, Cone, Torus, Profile, Point, Linear, Mesh, StatedInertia],  # noqa: UP007  (get_args below)
     Field(discriminator="shape"),
 ]
 SHAPES: dict[str, type[PartBase]] = {

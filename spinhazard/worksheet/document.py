@@ -15,10 +15,13 @@ from reportlab.platypus import BaseDocTemplate, Flowable, Frame, PageTemplate
 from spinhazard.assessment import Assessment
 from spinhazard.quantity.display import System
 from spinhazard.worksheet.calculations import calculations
-from spinhazard.worksheet.findings import findings, looked_at, missing
+from spinhazard.worksheet.findings import findings
 from spinhazard.worksheet.guards import guards
 from spinhazard.worksheet.identity import identity
 from spinhazard.worksheet.inputs import inputs
+from spinhazard.worksheet.lines import drawable
+from spinhazard.worksheet.looked_at import looked_at
+from spinhazard.worksheet.missing import missing
 from spinhazard.worksheet.page import Sheet
 from spinhazard.worksheet.policy import policy
 from spinhazard.worksheet.rotor import rotor
@@ -26,7 +29,6 @@ from spinhazard.worksheet.signoff import signoff
 from spinhazard.worksheet.stops import stops
 from spinhazard.worksheet.style import BOLD, MARGIN, PLAIN, RULE, register_fonts
 from spinhazard.worksheet.summary import summary
-from spinhazard.worksheet.text import drawable
 
 SECTIONS: tuple[Callable[[Sheet, int], list[Flowable]], ...] = (
     summary, findings, missing, rotor, stops, guards, looked_at, calculations, inputs, policy, signoff,
@@ -104,9 +106,11 @@ class _Pages(Canvas):  # type: ignore[misc]  # reportlab has no types
 
     def showPage(self) -> None:  # noqa: N802  (reportlab's name)
         self._held.append(dict(self.__dict__))
+        self._doc.pageCounter += 1  # bookmarks and links point to the page of this number
         self._startPage()
 
     def save(self) -> None:
+        self._doc.pageCounter = 1
         for page in self._held:
             self.__dict__.update(page)
             self._furnish(len(self._held))

@@ -1,18 +1,21 @@
-"""Findings by urgency, with reason, basis and what may be changed; what could not be decided; what was looked at."""
+"""Findings by urgency: what was found, why it matters, on whose text it rests, and what may be changed."""
 
 from __future__ import annotations
+
+from html import escape
 
 from reportlab.platypus import Flowable, KeepTogether
 
 from spinhazard.rules.engine import Finding
 from spinhazard.rules.rule import URGENCIES
-from spinhazard.sources import citation
-from spinhazard.worksheet.page import Sheet, group, heading
+from spinhazard.sources import citation, resolve
+from spinhazard.worksheet.page import Sheet, fact_anchor, finding_anchor, group, heading, link, source_anchor
 from spinhazard.worksheet.style import BODY, SMALL
-from spinhazard.worksheet.text import marked_up, paragraph, plain, shares, table
+from spinhazard.worksheet.text import marked_up, paragraph, plain
 
-MARKS = {"for review": "■ for review", "borderline": "◪ borderline", "data missing": "□ data missing"}
-"""State is said in words and by a filled, half-filled or empty square; never by colour."""
+MARKS = {"for review": "■ for review", "borderline": "◪ borderline"}
+"""State is said in words and by a filled or half-filled square; never by colour."""
+LAST = SMALL.clone("last of a finding", spaceAfter=6)
 
 
 def findings(sheet: Sheet, number: int) -> list[Flowable]:
@@ -31,97 +34,59 @@ def findings(sheet: Sheet, number: int) -> list[Flowable]:
         Flowables.
     """
     made = heading(number, "Findings")
-    any_found = False
+    ordered = in_order(sheet)
     for urgency in URGENCIES:
-        found = [
-            f
-            for o in ("for review", "borderline")
-            for f in sheet.assessment.findings
-            if f.outcome == o and f.rule.urgency == urgency
-        ]
+        found = [finding for finding in ordered if finding.rule.urgency == urgency]
         if found:
-            any_found = True
             made += group(urgency[0].upper() + urgency[1:])
-            made += [_finding(finding) for finding in found]
-    if not any_found:
+            made += [_finding(sheet, finding) for finding in found]
+    if not ordered:
         made.append(paragraph("Nothing is for review or borderline among the rules that could be decided.", BODY))
     return made
 
 
-def _finding(finding: Finding) -> Flowable:
+def in_order(sheet: Sheet) -> list[Finding]:
+    """What is for review or borderline: by urgency, then outcome, then as the rules stand.
+
+    Parameters
+    ----------
+    sheet : Sheet
+        What to print.
+
+    Returns
+    -------
+    list of Finding
+        Findings.
+    """
+    outcomes = list(MARKS)
+    found = [finding for finding in sheet.assessment.findings if finding.outcome in MARKS]
+    return sorted(found, key=lambda f: (URGENCIES.index(f.rule.urgency), outcomes.index(f.outcome)))
+
+
+def _finding(sheet: Sheet, finding: Finding) -> Flowable:
     rule = finding.rule
+    says = finding.says  # read first: the message may look at more facts, and those belong to the list below
     likelihood = f", in {100 * finding.likelihood:.0f} % of the draws" if 0.0 < finding.likelihood < 1.0 else ""
-    head = f"<b>{plain(MARKS[finding.outcome])}{likelihood}: {plain(rule.key)}</b> · {plain(finding.subject)}"
-    basis = "; ".join(citation(reference) for reference in rule.basis)
-    numbers = ", ".join(dict.fromkeys(name.partition("|")[0] for name in finding.facts))
+    anchor = f'<a name="{escape(finding_anchor(rule.key, finding.subject))}"/>'
+    head = f"{anchor}<b>{MARKS[finding.outcome]}{likelihood}: {plain(rule.key)}</b> · {plain(finding.subject)}"
+    basis = "; ".join(link(citation(reference), source_anchor(resolve(reference).id)) for reference in rule.basis)
     lines = [
         marked_up(head, BODY),
-        paragraph(finding.says, BODY),
+        paragraph(says, BODY),
         paragraph(f"Why: {rule.because}", SMALL),
-        paragraph(f"Basis: {basis}.", SMALL),
+        marked_up(f"Basis: {basis}.", SMALL),
     ]
     if rule.measures:
         lines.append(paragraph(f"May be changed: {', '.join(rule.measures)}.", SMALL))
-    lines.append(paragraph(f"Decided on: {numbers}.", SMALL.clone("decided", spaceAfter=5)))
+    lines.append(marked_up(f"Facts compared or named: {_facts(sheet, finding)}.", LAST))
     return KeepTogether(lines)
 
 
-def missing(sheet: Sheet, number: int) -> list[Flowable]:
-    """What could not be decided, and the fields that would settle it.
-
-    Parameters
-    ----------
-    sheet : Sheet
-        What to print.
-    number : int
-        Number of the section.
-
-    Returns
-    -------
-    list of Flowable
-        Flowables.
-    """
-    found = [finding for finding in sheet.assessment.findings if finding.outcome == "data missing"]
-    made = heading(number, "Data missing")
-    if not found:
-        return [*made, paragraph("Every rule that applies could be decided.", BODY)]
-    fields: dict[str, list[str]] = {}
-    for finding in found:
-        for field in finding.missing:
-            fields.setdefault(field, []).append(finding.rule.key)
-    ranked = sorted(fields.items(), key=lambda entry: (-len(entry[1]), entry[0]))
-    rows = [[field, ", ".join(dict.fromkeys(keys))] for field, keys in ranked]
-    text = f"{len(found)} findings could not be decided. What is not stated was not assessed; it is no finding in favour of the machine."
-    return [*made, paragraph(text, BODY), table(("state this field", "to decide"), rows, shares(sheet.width, (40, 60)))]
-
-
-def looked_at(sheet: Sheet, number: int) -> list[Flowable]:
-    """Rules that were looked at and not flagged, and rules that do not apply.
-
-    Parameters
-    ----------
-    sheet : Sheet
-        What to print.
-    number : int
-        Number of the section.
-
-    Returns
-    -------
-    list of Flowable
-        Flowables.
-    """
-    rows = [[f.rule.key, f.subject, f.says] for f in sheet.assessment.findings if f.outcome == "not flagged"]
-    absent: dict[str, list[str]] = {}
-    for finding in sheet.assessment.findings:
-        if finding.outcome == "not applicable":
-            absent.setdefault(finding.rule.key, []).append(finding.subject)
-    made = heading(number, "Looked at and not flagged")
-    if rows:
-        made.append(table(("rule", "subject", "as compared"), rows, shares(sheet.width, (26, 22, 52))))
-    made += group("Not applicable here")
-    made.append(
-        paragraph(
-            "; ".join(f"{key} ({len(names)})" for key, names in absent.items()) + "." if absent else "None.", SMALL
-        )
-    )
-    return made
+def _facts(sheet: Sheet, finding: Finding) -> str:
+    """Keys of the facts, each leading to its line among the calculations."""
+    known = sheet.fact_names
+    words = []
+    for name in finding.facts:
+        key, _, subject = name.partition("|")
+        words.append(link(key, fact_anchor(key, subject)) if name in known else plain(key))
+    return ", ".join(words)

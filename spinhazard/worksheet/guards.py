@@ -4,9 +4,10 @@ from __future__ import annotations
 
 from reportlab.platypus import Flowable
 
+from spinhazard.worksheet.grid import Grid
 from spinhazard.worksheet.page import Sheet, group, heading
 from spinhazard.worksheet.style import BODY
-from spinhazard.worksheet.text import paragraph, shares, table
+from spinhazard.worksheet.text import paragraph, shares
 
 
 def guards(sheet: Sheet, number: int) -> list[Flowable]:
@@ -42,29 +43,24 @@ def _access(sheet: Sheet) -> Flowable:
             *(sheet.number(key, guard.name) for key in ("guard_distance", "access_time", "required_distance")),
         ])  # fmt: skip
     heads = ("guard", "kind", "covers", "lock release", "fastened by", "distance", "access time", "distance needed")
-    return table(heads, rows, shares(sheet.width, (19, 12, 14, 13, 10, 10, 11, 12)), numbers=(5, 6, 7))
+    return Grid(heads, rows, shares(sheet.width, (19, 12, 14, 13, 10, 10, 11, 12)), numbers=(5, 6, 7))
 
 
 def _openings(sheet: Sheet) -> list[Flowable]:
     rows = []
     for guard in sheet.assessment.sheet.subjects.guards:
         for index, opening in enumerate(guard.entity.openings, start=1):
-            rows.append([guard.entity.id, str(index), opening.shape, opening.size.text, opening.distance.text])
+            nearest = [sheet.number(key, guard.name) if index == 1 else "" for key in ("opening_size", "opening_limit")]
+            rows.append(
+                [guard.entity.id, str(index), opening.shape, opening.size.text, opening.distance.text, *nearest]
+            )
     if not rows:
         return []
-    limits = [
-        f"{guard.entity.id}: {sheet.number('opening_size', guard.name)} against {sheet.number('opening_limit', guard.name)} allowed"
-        for guard in sheet.assessment.sheet.subjects.guards if guard.entity.openings
-    ]  # fmt: skip
     figures = "ISO 13857 table 4" if sheet.assessment.policy.figures == "iso" else "29 CFR 1910.217 table O-10"
-    made = table(
-        ("guard", "no.", "opening", "size", "distance to moving part"),
-        rows,
-        shares(sheet.width, (35, 8, 15, 20, 22)),
-        numbers=(3, 4),
-    )
-    text = f"Nearest to its limit ({figures}): " + "; ".join(limits) + "."
-    return [*group("Openings"), made, paragraph(text, BODY)]
+    heads = ("guard", "no.", "opening", "size", "to moving part", "nearest its limit", "allowed there")
+    made = Grid(heads, rows, shares(sheet.width, (26, 6, 12, 13, 15, 15, 13)), numbers=(3, 4, 5, 6))
+    text = f"The opening of each guard that comes nearest to its limit, and that limit, stand in its first line ({figures})."
+    return [*group("Openings", made), paragraph(text, BODY)]
 
 
 def _containment(sheet: Sheet) -> list[Flowable]:
@@ -84,6 +80,6 @@ def _containment(sheet: Sheet) -> list[Flowable]:
     if not rows:
         return []
     heads = ("guard", "worst piece", "its speed", "its energy", "perforates", "× 1.25", "guard wall")
-    made = table(heads, rows, shares(sheet.width, (22, 20, 12, 12, 12, 11, 11)), numbers=(2, 3, 4, 5, 6))
+    made = Grid(heads, rows, shares(sheet.width, (22, 20, 12, 12, 12, 11, 11)), numbers=(2, 3, 4, 5, 6))
     text = "Screening by a formula for steel plate hit by a stiff missile; it does not replace a test of the guard."
-    return [*group("What could come off"), made, paragraph(text, BODY)]
+    return [*group("What could come off", made), paragraph(text, BODY)]

@@ -27,7 +27,7 @@ def identity(sheet: Sheet) -> list[Flowable]:
     pairs = [
         ("Kind", machine.kind), ("Plant", machine.site), ("Place", machine.location), ("Serial number", machine.serial),
         ("Assessed by", ", ".join(text for text in (record.assessor, record.role) if text) or "not stated"),
-        ("Day of assessment", str(record.date) if record.date else "not stated"), ("Revision", str(record.revision)),
+        ("Assessed on", str(record.date) if record.date else "not stated"), ("Revision", str(record.revision)),
         ("Reason", record.reason), ("References", machine.references), ("Program", sheet.assessment.program),
         ("Policy", sheet.assessment.policy.name), ("Status", "draft until signed at the end"),
     ]  # fmt: skip

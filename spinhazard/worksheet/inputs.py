@@ -8,9 +8,10 @@ from spinhazard.facts.records import values_of
 from spinhazard.quantity.display import number as figures_of
 from spinhazard.quantity.stated import Stated
 from spinhazard.quantity.units import KINDS
-from spinhazard.worksheet.page import Sheet, heading
+from spinhazard.worksheet.grid import Grid
+from spinhazard.worksheet.page import WITH_TEXT_AND_TABLE, Sheet, heading
 from spinhazard.worksheet.style import BODY
-from spinhazard.worksheet.text import paragraph, shares, table
+from spinhazard.worksheet.text import paragraph, shares
 
 
 def inputs(sheet: Sheet, number: int) -> list[Flowable]:
@@ -30,12 +31,12 @@ def inputs(sheet: Sheet, number: int) -> list[Flowable]:
     """
     rows = [_row(sheet, path, stated) for path, stated in values_of(sheet.assessment.file)]
     text = "Paths are those of the assessment file. A spread marked “policy” was not stated and is the policy's for its kind of source."
-    heads = ("value", "as written", "SI", "half-width used", "source, note, instrument")
-    made = table(heads, rows, shares(sheet.width, (32, 17, 15, 13, 23)), numbers=(2, 3))
-    return [*heading(number, "Stated values"), paragraph(text, BODY), made]
+    heads = ("value", "as written", "SI", "half-width, SI", "source, note, instrument")
+    made = Grid(heads, rows, shares(sheet.width, (32, 17, 15, 13, 23)), numbers=(2, 3))
+    return [*heading(number, "Stated values", room=WITH_TEXT_AND_TABLE), paragraph(text, BODY), made]
 
 
-def _row(sheet: Sheet, path: str, stated: Stated) -> list[str | Flowable | list[Flowable]]:
+def _row(sheet: Sheet, path: str, stated: Stated) -> list[str]:
     unit = KINDS[stated.kind].si
     spread = "none"
     if stated.half_width:

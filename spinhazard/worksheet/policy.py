@@ -6,9 +6,10 @@ from reportlab.platypus import Flowable
 
 from spinhazard.facts.fact import FACTS
 from spinhazard.sources import Source, resolve
-from spinhazard.worksheet.page import Sheet, group, heading
+from spinhazard.worksheet.grid import Grid
+from spinhazard.worksheet.page import Sheet, group, heading, source_anchor
 from spinhazard.worksheet.style import BODY, SMALL
-from spinhazard.worksheet.text import paragraph, shares, table
+from spinhazard.worksheet.text import paragraph, shares
 
 
 def policy(sheet: Sheet, number: int) -> list[Flowable]:
@@ -36,24 +37,38 @@ def policy(sheet: Sheet, number: int) -> list[Flowable]:
         *(paragraph(f"{name}: {digest}", SMALL) for name, digest in digests.items()),
     ]
     deviations = [list(entry) for entry in used.deviations()]
-    made += group("Deviations from the shipped defaults")
     if deviations:
-        made.append(table(("setting", "shipped", "here"), deviations, shares(sheet.width, (40, 30, 30))))
+        table = Grid(("setting", "shipped", "here"), deviations, shares(sheet.width, (40, 30, 30)))
+        made += group("Deviations from the shipped defaults", table)
     else:
-        made.append(paragraph("None.", BODY))
-    settings = [line.split(" = ", 1) for line in used.as_text().split("\n")]
-    made += group("Settings")
-    made.append(paragraph("; ".join(f"{name} {value}" for name, value in settings if value != "none") + ".", SMALL))
+        made += [*group("Deviations from the shipped defaults"), paragraph("None.", BODY)]
+    made += group("Settings", _settings(sheet))
+    made += group("Sources", _sources(sheet))
+    return made
+
+
+def _settings(sheet: Sheet) -> Grid:
+    """Every threshold and default, two to a line."""
+    lines = [line.split(" = ", 1) for line in sheet.assessment.policy.as_text().split("\n")]
+    entries = [[name.replace("_", " "), value] for name, value in lines]
+    half = (len(entries) + 1) // 2
+    rows = [[*entries[i], *(entries[half + i] if half + i < len(entries) else ("", ""))] for i in range(half)]
+    return Grid(("setting", "value", "setting", "value"), rows, shares(sheet.width, (26, 24, 26, 24)), fine=True)
+
+
+def _sources(sheet: Sheet) -> Grid:
+    cited = _cited(sheet)
     rows = [
         [
             source.short,
             ", ".join(text for text in (source.author, source.title, source.edition, source.publisher) if text),
             source.status,
         ]
-        for source in _cited(sheet)
+        for source in cited
     ]
-    made += [*group("Sources"), table(("cited as", "document", "figures"), rows, shares(sheet.width, (25, 60, 15)))]
-    return made
+    anchors = [(source_anchor(source.id),) for source in cited]
+    heads = ("cited as", "document", "figures from")
+    return Grid(heads, rows, shares(sheet.width, (25, 60, 15)), anchors=anchors, fine=True)
 
 
 def _cited(sheet: Sheet) -> list[Source]:

@@ -4,9 +4,10 @@ from __future__ import annotations
 
 from reportlab.platypus import Flowable, KeepTogether
 
+from spinhazard.worksheet.grid import Grid
 from spinhazard.worksheet.page import Sheet, heading
 from spinhazard.worksheet.style import BODY
-from spinhazard.worksheet.text import paragraph, shares, table
+from spinhazard.worksheet.text import paragraph, shares
 
 
 def signoff(sheet: Sheet, number: int) -> list[Flowable]:
@@ -34,6 +35,6 @@ def signoff(sheet: Sheet, number: int) -> list[Flowable]:
         ["checked by", "", "", "", ""],
         ["released by", "", "", "", ""],
     ]
-    made = table(("", "name", "role", "day", "signature"), rows, shares(sheet.width, (16, 26, 22, 12, 24)))
-    made.setStyle([("BOTTOMPADDING", (0, 1), (-1, -1), 16), ("TOPPADDING", (0, 1), (-1, -1), 6)])
+    heads = ("", "name", "role", "day", "signature")
+    made = Grid(heads, rows, shares(sheet.width, (16, 26, 22, 12, 24)), row_height=32.0)
     return [KeepTogether([*heading(number, "Signatures"), paragraph(text, BODY), made])]

@@ -2,20 +2,25 @@
 
 from __future__ import annotations
 
+import itertools
 import math
+from collections.abc import Callable
 
 import numpy as np
 from reportlab.graphics.shapes import Drawing, Line, PolyLine, Rect, String
 from reportlab.lib import colors
 
+from spinhazard.facts.sheet import FactSheet
 from spinhazard.facts.stopping import speed_at
 from spinhazard.quantity.display import display
-from spinhazard.sampling import Samples
+from spinhazard.sampling import Sampler, Samples
 from spinhazard.worksheet.page import Sheet
 from spinhazard.worksheet.style import FAINT, PLAIN, RULE
 
 POINTS = 240
 HEIGHT = 150.0
+ON_EACH_OTHER = 0.01
+"""Curves nearer than this share of the highest speed cannot be told apart on paper."""
 DASHES: dict[str, tuple[list[float] | None, float]] = {
     "normal stop": (None, 1.4),
     "power loss": ([6, 2], 1.2),
@@ -23,8 +28,8 @@ DASHES: dict[str, tuple[list[float] | None, float]] = {
 }
 
 
-def stop_drawing(sheet: Sheet) -> Drawing | None:
-    """Two charts side by side.
+def stop_drawing(sheet: Sheet) -> tuple[Drawing, list[str]] | None:
+    """Two charts side by side, and what has to be said about them.
 
     Parameters
     ----------
@@ -33,33 +38,39 @@ def stop_drawing(sheet: Sheet) -> Drawing | None:
 
     Returns
     -------
-    Drawing or None
+    (Drawing, list of str) or None
         None where no stop could be computed.
     """
     assessment = sheet.assessment
-    cases = []
-    for stop in assessment.sheet.subjects.stops:
-        fact = assessment.fact("stopping_time", stop.name)
-        if fact is not None and fact.known:
-            cases.append((stop.entity, fact.best))
-    if not cases:
+    facts = {stop.entity: assessment.fact("stopping_time", stop.name) for stop in assessment.sheet.subjects.stops}
+    ends = {case: fact.best for case, fact in facts.items() if fact is not None and fact.known}
+    inertia, start = assessment.fact("referred_inertia"), assessment.fact("stopping_shaft_speed")
+    if not ends or inertia is None or start is None or not start.best > 0.0:
         return None
-    horizon = _horizon([time for _, time in cases])
-    times = np.linspace(0.0, horizon, POINTS)
-    with np.errstate(all="ignore"):
-        speeds = {case: _best_speeds(sheet, case, times) for case, _ in cases}
-    inertia = assessment.fact("referred_inertia")
-    start = assessment.fact("stopping_shaft_speed")
-    if inertia is None or start is None:
-        return None
-    drawing = Drawing(sheet.width, HEIGHT + 22)
-    half = sheet.width / 2.0
-    top_energy = 0.5 * inertia.best * start.best**2
+    times = np.linspace(0.0, _horizon(list(ends.values())), POINTS)
+    speeds = _best_speeds(sheet, list(ends), times)
     energies = {case: 0.5 * inertia.best * speed**2 for case, speed in speeds.items()}
+    drawing = Drawing(sheet.width, HEIGHT + 30)
+    half = sheet.width / 2.0
     _chart(drawing, sheet, (0.0, half - 8), times, speeds, start.best, "rad/s")
-    _chart(drawing, sheet, (half + 4, half - 8), times, energies, top_energy, "J")
-    _legend(drawing, [case for case, _ in cases])
-    return drawing
+    _chart(drawing, sheet, (half + 4, half - 8), times, energies, 0.5 * inertia.best * start.best**2, "J")
+    _legend(drawing, list(ends))
+    return drawing, _remarks(ends, speeds, start.best, float(times[-1]))
+
+
+def _remarks(ends: dict[str, float], speeds: dict[str, Samples], start: float, horizon: float) -> list[str]:
+    """Curves that lie on each other, and stops that never end."""
+    said = [
+        f"{one} and {other} lie on each other"
+        for one, other in itertools.combinations(speeds, 2)
+        if np.max(np.abs(speeds[one] - speeds[other])) < ON_EACH_OTHER * start
+    ]
+    said += [
+        f"{case} never reaches standstill and is drawn to {display(horizon, 's')}"
+        for case, end in ends.items()
+        if math.isinf(end)
+    ]
+    return said
 
 
 def _horizon(times: list[float]) -> float:
@@ -69,16 +80,14 @@ def _horizon(times: list[float]) -> float:
     return max(longest, 1.0) if len(ending) == len(times) else max(4.0 * longest, 600.0)
 
 
-def _best_speeds(sheet: Sheet, case: str, times: Samples) -> Samples:
-    """Speeds by best estimate: a copy of the pipeline on one draw, evaluated at many times at once."""
-    from spinhazard.facts.sheet import FactSheet  # noqa: PLC0415  (only where something is drawn)
-    from spinhazard.sampling import Sampler  # noqa: PLC0415
-
+def _best_speeds(sheet: Sheet, cases: list[str], times: Samples) -> dict[str, Samples]:
+    """Speeds by best estimate: the same facts without draws, evaluated at many times at once."""
     assessment = sheet.assessment
     best = FactSheet(
-        assessment.file, assessment.policy, Sampler("", 0, assessment.policy.spreads), assessment.sheet.coast
+        assessment.file, assessment.policy, Sampler("", 0, assessment.policy.spreads), assessment.sheet.beside
     )
-    return np.asarray(speed_at(best, case, times), dtype=np.float64)
+    with np.errstate(all="ignore"):  # infinity stands for a stop that never ends
+        return {case: np.asarray(speed_at(best, case, times), dtype=np.float64) for case in cases}
 
 
 def _chart(
@@ -117,18 +126,28 @@ def _chart(
     _marks(drawing, sheet, across, (left, left + width), (bottom, height))
 
 
-def _marks(drawing: Drawing, sheet: Sheet, across, sides: tuple[float, float], frame: tuple[float, float]) -> None:  # type: ignore[no-untyped-def]  # noqa: ANN001
-    bottom, height = frame
+def _marks(
+    drawing: Drawing,
+    sheet: Sheet,
+    across: Callable[[float], float],
+    sides: tuple[float, float],
+    frame: tuple[float, float],
+) -> None:
+    """Earliest access and stated wait as lines with a letter, access through each guard as a short tick."""
+    bottom, top = frame[0], frame[0] + frame[1]
+    for guard in sheet.assessment.sheet.subjects.guards:
+        fact = sheet.assessment.fact("stop_time_before_access", guard.name)
+        if fact is not None and fact.known and across(fact.best) <= sides[1]:
+            x = across(fact.best)
+            drawing.add(Line(x, top, x, top - 7, strokeColor=RULE, strokeWidth=0.9))
     for letter, key, subject in (("A", "earliest_access", "machine"), ("W", "stated_wait", "lockout")):
         fact = sheet.assessment.fact(key, subject)
         if fact is None or not fact.known or not math.isfinite(fact.best):
             continue
         x = min(across(fact.best), sides[1])
-        drawing.add(
-            Line(x, bottom, x, bottom + height, strokeColor=RULE, strokeWidth=0.9, strokeDashArray=[3, 1.5, 0.8, 1.5])
-        )
+        drawing.add(Line(x, bottom, x, top, strokeColor=RULE, strokeWidth=0.9, strokeDashArray=[3, 1.5, 0.8, 1.5]))
         beyond = " →" if across(fact.best) > sides[1] else ""
-        drawing.add(_text(x, bottom + height + 3, letter + beyond, "middle" if not beyond else "end"))
+        drawing.add(_text(x, top + 3, letter + beyond, "end" if beyond else "middle"))
 
 
 def _legend(drawing: Drawing, cases: list[str]) -> None:

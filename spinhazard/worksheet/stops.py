@@ -2,13 +2,17 @@
 
 from __future__ import annotations
 
+import statistics
+
 from reportlab.platypus import Flowable, KeepTogether
 
+from spinhazard.facts.measured import ENOUGH_FOR_A_SPREAD
 from spinhazard.quantity.display import display
+from spinhazard.worksheet.grid import Grid
 from spinhazard.worksheet.page import Sheet, heading
 from spinhazard.worksheet.stop_drawing import stop_drawing
 from spinhazard.worksheet.style import BODY, SMALL
-from spinhazard.worksheet.text import paragraph, shares, table
+from spinhazard.worksheet.text import paragraph, shares
 
 COLUMNS = (
     "stopping_time",
@@ -49,7 +53,7 @@ def stops(sheet: Sheet, number: int) -> list[Flowable]:
         cells += [sheet.number(key, stop.name) for key in COLUMNS[1:]]
         rows.append([stop.entity + ("" if stop.entity in credible else " (not credible by policy)"), *cells])
     heads = ("stop case", "time to standstill", "turns", "energy at access", "brake heat", "temp. rise", "heat/rating")
-    made = table(heads, rows, shares(sheet.width, (17, 25, 10, 14, 13, 11, 11)), numbers=(1, 2, 3, 4, 5, 6))
+    made = Grid(heads, rows, shares(sheet.width, (17, 25, 10, 14, 13, 11, 11)), numbers=(1, 2, 3, 4, 5, 6))
     return [*heading(number, "Stops"), *_basis(sheet), made, *_measured(sheet), *_drawing(sheet)]
 
 
@@ -75,23 +79,35 @@ def _measured(sheet: Sheet) -> list[Flowable]:
     case = stopping.measured_case or "stop case not stated"
     day = f" on {stopping.measured_on}" if stopping.measured_on else ""
     value = sheet.number("measured_stopping_time")
-    text = f"Measured ({case}{day}): {readings}. Used: {value}, the longest, or mean + 3 s where there are five or more readings."
+    seconds = [time.value for time in stopping.measured_times]
+    spread = ""
+    if len(seconds) > 1:
+        mean, deviation = statistics.fmean(seconds), statistics.stdev(seconds)
+        spread = f"; mean {display(mean, 's')}, standard deviation {display(deviation, 's')}"
+    text = (
+        f"Measured ({case}{day}): {readings}. Longest {display(max(seconds), 's')}{spread}. Used: {value}, by the convention: the longest "
+        f"reading or, from {ENOUGH_FOR_A_SPREAD} readings on, the mean plus three standard deviations if that is longer."
+    )
     return [paragraph(text, SMALL)]
 
 
 def _drawing(sheet: Sheet) -> list[Flowable]:
-    drawing = stop_drawing(sheet)
-    if drawing is None:
+    made = stop_drawing(sheet)
+    if made is None:
         return []
+    drawing, remarks = made
     wait = sheet.assessment.fact("stated_wait", "lockout")
     access = sheet.assessment.fact("earliest_access")
     marks = []
     if access is not None and access.known:
-        marks.append(f"A: earliest access, {display(access.best, 's')} into the stop")
+        marks.append(
+            f"A: earliest access, {display(access.best, 's')} into the stop; short ticks: access guard by guard"
+        )
     if wait is not None and wait.known:
         marks.append(f"W: stated wait, {display(wait.best, 's')}")
     caption = (
-        "Speed (left) and energy of the drivetrain (right) over the time after the stop command, best estimate. "
-        + "; ".join(marks)
+        "Computed speed (left) and energy of the drivetrain (right) over the time after the stop command, by best estimate; a longer "
+        "measured time stands in the table only"
     )
-    return [KeepTogether([drawing, paragraph(caption.rstrip() + ("." if marks else ""), SMALL)])]
+    sentences = [caption, *marks, *(remark[0].upper() + remark[1:] for remark in remarks)]
+    return [KeepTogether([drawing, paragraph(". ".join(sentences) + ".", SMALL)])]

@@ -5,14 +5,15 @@ from __future__ import annotations
 from reportlab.platypus import Flowable, Spacer, Table
 
 from spinhazard.facts.fact import Fact
-from spinhazard.rules.rule import OUTCOMES, URGENCIES
-from spinhazard.sampling import SOURCE
-from spinhazard.sources import citation
-from spinhazard.worksheet.page import Sheet, heading
+from spinhazard.rules.rule import OUTCOMES
+from spinhazard.worksheet.findings import in_order
+from spinhazard.worksheet.grid import Cell, Grid, Linked
+from spinhazard.worksheet.missing import fields_to_state
+from spinhazard.worksheet.page import Sheet, finding_anchor, heading
 from spinhazard.worksheet.style import BODY, FIGURE, FIGURE_BOX, LABEL
-from spinhazard.worksheet.text import paragraph, shares, table
+from spinhazard.worksheet.text import paragraph, shares
 
-MOST_LINES = 14
+MOST_LINES, MOST_FIELDS = 14, 6
 
 
 def summary(sheet: Sheet, number: int) -> list[Flowable]:
@@ -34,8 +35,9 @@ def summary(sheet: Sheet, number: int) -> list[Flowable]:
         *heading(number, "Summary"),
         _figures(sheet),
         Spacer(1, 5),
-        *_urgent(sheet),
-        Spacer(1, 3),
+        *_stop_cases(sheet),
+        _urgent(sheet),
+        *_missing(sheet),
         paragraph(_counts(sheet), BODY),
     ]
 
@@ -69,38 +71,52 @@ def _figure(sheet: Sheet, label: str, fact: Fact | None) -> list[Flowable]:
     return [paragraph(sheet.of(fact), FIGURE), paragraph(label, LABEL), *([paragraph(ends, LABEL)] if ends else [])]
 
 
-def _urgent(sheet: Sheet) -> list[Flowable]:
-    found = [
-        finding
-        for urgency in URGENCIES
-        for outcome in ("for review", "borderline")
-        for finding in sheet.assessment.findings
-        if finding.outcome == outcome and finding.rule.urgency == urgency
-    ]
-    if not found:
-        return [paragraph("Nothing is for review or borderline among the rules that could be decided.", BODY)]
+def _urgent(sheet: Sheet) -> Flowable:
+    """One line to a rule, most urgent first, each leading to its first finding."""
     lines: dict[tuple[str, str, str], list[str]] = {}
-    for finding in found:
-        name = "" if finding.subject in {"machine", "lockout"} else finding.subject.partition(":")[2]
-        lines.setdefault((finding.rule.urgency, finding.outcome, finding.rule.key), []).append(name)
-    rows = [
-        (urgency, outcome, key, ", ".join(name for name in names if name))
-        for (urgency, outcome, key), names in lines.items()
+    for finding in in_order(sheet):
+        lines.setdefault((finding.rule.urgency, finding.outcome, finding.rule.key), []).append(finding.subject)
+    if not lines:
+        return paragraph("Nothing is for review or borderline among the rules that could be decided.", BODY)
+    rows: list[list[Cell]] = [
+        [
+            urgency,
+            outcome,
+            Linked(key, finding_anchor(key, subjects[0])),
+            ", ".join(filter(None, map(_place, subjects))),
+        ]
+        for (urgency, outcome, key), subjects in list(lines.items())[:MOST_LINES]
     ]
-    shown = [list(row) for row in rows[:MOST_LINES]]
-    if len(rows) > MOST_LINES:
-        shown.append(["", "", f"and {len(rows) - MOST_LINES} more, in the section on findings", ""])
-    made = table(("urgency", "outcome", "finding", "at"), shown, shares(sheet.width, (20, 13, 34, 33)))
-    return [made]
+    if len(lines) > MOST_LINES:
+        rows.append(["", "", f"and {len(lines) - MOST_LINES} more, in the section on findings", ""])
+    return Grid(("urgency", "outcome", "finding", "at"), rows, shares(sheet.width, (20, 13, 34, 33)))
+
+
+def _place(subject: str) -> str:
+    return subject.partition(":")[2]
+
+
+def _stop_cases(sheet: Sheet) -> list[Flowable]:
+    cases = sheet.assessment.sheet.subjects.stops
+    if not cases:
+        return [paragraph("Stop cases: nothing is stated about stopping.", BODY)]
+    times = "; ".join(f"{stop.entity} {sheet.number('stopping_time', stop.name)}" for stop in cases)
+    return [paragraph(f"Time to standstill: {times}.", BODY)]
+
+
+def _missing(sheet: Sheet) -> list[Flowable]:
+    fields = [field for field, _ in fields_to_state(sheet)]
+    if not fields:
+        return []
+    more = f" and {len(fields) - MOST_FIELDS} more, in the section on missing data" if len(fields) > MOST_FIELDS else ""
+    return [paragraph(f"Missing, so not decided: {', '.join(fields[:MOST_FIELDS])}{more}.", BODY)]
 
 
 def _counts(sheet: Sheet) -> str:
     counts = {outcome: sum(finding.outcome == outcome for finding in sheet.assessment.findings) for outcome in OUTCOMES}
     text = "Findings: " + ", ".join(f"{count} {outcome}" for outcome, count in counts.items()) + ". "
-    if sheet.assessment.draws:
-        share = f"{100 * sheet.assessment.policy.coverage:g} %"
-        return (
-            text + f"Figures under a value are the ends of its {share} interval ({sheet.assessment.draws} draws from "
-            f"the stated spreads; {citation(SOURCE)})."
-        )
-    return text + "Best estimate only; the stated spreads were left out."
+    draws = sheet.assessment.draws
+    if not draws:
+        return text + "Best estimate only; the stated spreads were left out."
+    share = f"{100 * sheet.assessment.policy.coverage:g} %"
+    return f"{text}Figures under a value are the ends of its {share} interval ({draws} draws from the stated spreads)."

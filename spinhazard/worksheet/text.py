@@ -4,19 +4,14 @@ from __future__ import annotations
 
 from collections.abc import Sequence
 from functools import lru_cache
-from typing import Any, TypeAlias
-from xml.sax.saxutils import escape
+from html import escape
+from typing import Any
 
 from reportlab.lib.styles import ParagraphStyle
-from reportlab.pdfbase import pdfmetrics
-from reportlab.platypus import Paragraph, Table
+from reportlab.platypus import Paragraph
 
-from spinhazard.worksheet.style import CELL, GRID, HEAD_CELL, HEAD_NUMBER, NUMBER, PLAIN
-
-
-@lru_cache(maxsize=1)
-def _known_characters() -> frozenset[int]:
-    return frozenset(pdfmetrics.getFont(PLAIN).face.charToGlyph)
+from spinhazard.worksheet.lines import drawable
+from spinhazard.worksheet.style import CELL
 
 
 def plain(text: object) -> str:
@@ -32,27 +27,7 @@ def plain(text: object) -> str:
     str
         Fit for a reportlab paragraph.
     """
-    return escape(drawable(text))
-
-
-def drawable(text: object) -> str:
-    """Text in which every character the font lacks is shown by its code point; for drawings and canvas, unescaped.
-
-    Parameters
-    ----------
-    text : object
-        Anything with a text.
-
-    Returns
-    -------
-    str
-        Printable text.
-    """
-    whole = str(text)
-    if whole.isascii():
-        return whole
-    known = _known_characters()
-    return "".join(c if ord(c) in known else f"[U+{ord(c):04X}]" for c in whole)
+    return escape(drawable(text), quote=False)
 
 
 class _Paragraph(Paragraph):  # type: ignore[misc]  # reportlab has no types
@@ -106,43 +81,6 @@ def marked_up(text: str, style: ParagraphStyle = CELL) -> Paragraph:
         Flowable.
     """
     return _Paragraph(text, style)
-
-
-Cell: TypeAlias = Any  # text, taken literally, or flowables (reportlab has no types)
-
-
-def table(
-    heads: Sequence[str], rows: Sequence[Sequence[Cell]], widths: Sequence[float], *, numbers: Sequence[int] = ()
-) -> Table:
-    """A table that breaks over pages and repeats its head.
-
-    Parameters
-    ----------
-    heads : sequence of str
-        Column heads.
-    rows : sequence of sequences
-        Cells: text, taken literally, or flowables.
-    widths : sequence of float
-        Column widths [pt].
-    numbers : sequence of int
-        Columns set to the right.
-
-    Returns
-    -------
-    Table
-        Flowable.
-    """
-    top = [paragraph(head, HEAD_NUMBER if index in numbers else HEAD_CELL) for index, head in enumerate(heads)]
-    body = [
-        [
-            paragraph(cell, NUMBER if index in numbers else CELL) if isinstance(cell, str) else cell
-            for index, cell in enumerate(row)
-        ]
-        for row in rows
-    ]
-    made = Table([top, *body], colWidths=list(widths), repeatRows=1, splitInRow=1, spaceAfter=4)
-    made.setStyle(GRID)
-    return made
 
 
 def shares(total: float, parts: Sequence[float]) -> list[float]:
