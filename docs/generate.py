@@ -96,7 +96,7 @@ def rule_page(rule: Rule) -> str:
 def rules_index() -> str:
     """All rules in one table by family."""
     pages = ["# Rules\n"]
-    rules = shipped_catalogue().rules
+    rules = shipped_catalogue(examples=True).rules
     for family in dict.fromkeys(rule.family for rule in rules):
         rows = [(f"[{r.key}]({r.key}.md)", r.asks, r.urgency) for r in rules if r.family == family]
         pages.append(f"## {family}\n\n" + table(("key", "asks", "urgency"), rows))
@@ -162,7 +162,7 @@ def pages() -> dict[str, str]:
         "formulas.md": formulas(), "facts.md": facts(), "validation.md": validation(), "sources.md": sources(), "units.md": units(),
         "cli.md": command_line(), "rules/README.md": rules_index(),
     }  # fmt: skip
-    made |= {f"rules/{rule.key}.md": rule_page(rule) for rule in shipped_catalogue().rules}
+    made |= {f"rules/{rule.key}.md": rule_page(rule) for rule in shipped_catalogue(examples=True).rules}
     return {name: HEAD + text for name, text in made.items()}
 
 

@@ -2,6 +2,8 @@
 
 from __future__ import annotations
 
+from collections.abc import Callable
+
 import numpy as np
 
 from spinhazard.facts.fact import Word, fact
@@ -100,7 +102,7 @@ def mass(sheet: FactSheet, part: Subject) -> Samples:
     return pieces
 
 
-PIECE_FORMULAS = [
+PIECE_FORMULAS: list[Callable[..., Samples]] = [
     moments.disk_inertia,
     moments.sphere_inertia,
     moments.crossways_rod_inertia,

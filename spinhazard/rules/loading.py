@@ -72,9 +72,14 @@ class Catalogue:
         )
 
 
-@lru_cache(maxsize=1)
-def shipped_catalogue() -> Catalogue:
+@lru_cache(maxsize=2)
+def shipped_catalogue(*, examples: bool = False) -> Catalogue:
     """The catalogue that comes with the program.
+
+    Parameters
+    ----------
+    examples : bool
+        With the examples beside the rules, which an assessment does not need and which are most of the text.
 
     Returns
     -------
@@ -83,16 +88,30 @@ def shipped_catalogue() -> Catalogue:
     """
     folder = resources.files("spinhazard.rules").joinpath("catalogue")
     files = sorted((entry for entry in folder.iterdir() if entry.name.endswith(".toml")), key=lambda entry: entry.name)
-    return catalogue_of((entry.name, entry.read_text("utf-8")) for entry in files)
+    return catalogue_of(((entry.name, entry.read_text("utf-8")) for entry in files), examples=examples)
 
 
-def catalogue_of(files: Iterable[tuple[str, str]]) -> Catalogue:
+def _without_examples(text: str) -> str:
+    """The same lines with those of the examples left empty, so that line numbers stay."""
+    kept: list[str] = []
+    inside = False
+    for line in text.split("\n"):
+        head = line.strip()
+        if head.startswith("[["):
+            inside = head == "[[rule.example]]"
+        kept.append("" if inside else line)
+    return "\n".join(kept)
+
+
+def catalogue_of(files: Iterable[tuple[str, str]], *, examples: bool = True) -> Catalogue:
     """A catalogue from the texts of its files.
 
     Parameters
     ----------
     files : iterable of (str, str)
         Name and text of each file; the name without ``.toml`` is the family.
+    examples : bool
+        Read the examples as well; the digest is that of the whole text either way.
 
     Returns
     -------
@@ -107,7 +126,8 @@ def catalogue_of(files: Iterable[tuple[str, str]]) -> Catalogue:
     texts = tuple(files)
     rules: dict[str, Rule] = {}
     for name, text in texts:
-        for index, rule in enumerate(load_rules(text, name=name, family=name.removesuffix(".toml"))):
+        wanted = text if examples else _without_examples(text)
+        for index, rule in enumerate(load_rules(wanted, name=name, family=name.removesuffix(".toml"))):
             if rule.key in rules:
                 raise CatalogueError(
                     Complaint(

@@ -21,7 +21,7 @@ from spinhazard.statement.policy import Policy
 from spinhazard.statement.rotor import SHAPES, Shaft
 from spinhazard.statement.stopping import StopCase
 
-RULES = shipped_catalogue().rules
+RULES = shipped_catalogue(examples=True).rules
 FAMILIES = (
     "access", "containment", "energy", "lockout", "plausibility", "records", "speed", "stopping", "strength",
 )  # fmt: skip
@@ -80,7 +80,7 @@ def test_every_example_gives_the_outcome_it_states(rule, example):
 
 
 def test_an_example_with_the_wrong_outcome_is_noticed():
-    rule = shipped_catalogue().rule("wait-shorter-than-stop")
+    rule = shipped_catalogue(examples=True).rule("wait-shorter-than-stop")
     enough = Example(given={"stated_wait": "5 min", "required_wait": "254 s"}, expect="for review")
 
     assert run_example(rule, enough).outcome == "not flagged"
@@ -117,7 +117,7 @@ def test_every_rule_brings_the_kinds_of_examples_it_owes(rule):
 
 
 def test_a_rule_without_its_case_at_the_limit_is_noticed():
-    rule = shipped_catalogue().rule("swings-back")
+    rule = shipped_catalogue(examples=True).rule("swings-back")
     poorer = dataclasses.replace(rule, examples=tuple(example for example in rule.examples if not example.note))
 
     assert kinds_owed(poorer) - kinds_there(poorer) == {"at the limit"}
@@ -224,21 +224,21 @@ def test_every_placeholder_of_every_message_is_a_fact_or_a_setting():
     ],
 )
 def test_an_example_whose_value_is_of_another_kind_is_refused(given, problem):
-    rule = shipped_catalogue().rule("wait-shorter-than-stop")
+    rule = shipped_catalogue(examples=True).rule("wait-shorter-than-stop")
 
     with pytest.raises(CatalogueError, match=problem):
         run_example(rule, Example(given={**given, "required_wait": "9 s"}, expect="for review"))
 
 
 def test_an_example_that_gives_a_number_for_a_word_is_refused():
-    rule = shipped_catalogue().rule("standstill-not-verified")
+    rule = shipped_catalogue(examples=True).rule("standstill-not-verified")
 
     with pytest.raises(CatalogueError, match=r"verification: neither a word nor true or false\. Stated: 3"):
         run_example(rule, Example(given={"verification": 3}, expect="for review"))
 
 
 def test_a_spread_is_an_even_grid_around_the_best_estimate():
-    rule = shipped_catalogue().rule("energy-above-review-level")
+    rule = shipped_catalogue(examples=True).rule("energy-above-review-level")
 
     finding = run_example(rule, Example(given={"stored_energy": "950 J ± 100 J"}, expect="borderline"))
 
@@ -248,7 +248,7 @@ def test_a_spread_is_an_even_grid_around_the_best_estimate():
 
 
 def test_a_site_policy_moves_the_limit_of_an_example():
-    rule = shipped_catalogue().rule("energy-above-review-level")
+    rule = shipped_catalogue(examples=True).rule("energy-above-review-level")
     strict = Policy(energy_review_level="100 J")
 
     case = Example(given={"stored_energy": "420 J"}, expect="not flagged")

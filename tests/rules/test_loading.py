@@ -208,12 +208,12 @@ def test_an_unknown_key_is_answered_with_the_nearest():
     with pytest.raises(
         CatalogueError, match=r'no rule has this key\. Stated: "wait-shorter".*Nearest: wait-shorter-than-stop'
     ):
-        shipped_catalogue().rule("wait-shorter")
+        shipped_catalogue(examples=True).rule("wait-shorter")
 
 
 def test_a_key_like_no_other_is_answered_without_a_guess():
     with pytest.raises(CatalogueError, match=r'Stated: "zzzzzzzz"\. Accepted: a key that `spinhazard rules` lists\.\Z'):
-        shipped_catalogue().rule("zzzzzzzz")
+        shipped_catalogue(examples=True).rule("zzzzzzzz")
 
 
 def test_a_withdrawn_rule_keeps_its_reason():

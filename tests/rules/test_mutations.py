@@ -9,7 +9,7 @@ from spinhazard.rules.loading import shipped_catalogue
 from spinhazard.rules.rule import Alternatives, Operand
 from spinhazard.statement.policy import Policy
 
-RULES = shipped_catalogue().rules
+RULES = shipped_catalogue(examples=True).rules
 POLICY = Policy()
 TURNED = {"exceeds": "is below", "is below": "exceeds", "is": "is not", "is not": "is"}
 
@@ -80,7 +80,7 @@ def test_no_small_change_of_a_rule_goes_unnoticed(rule):
 
 
 def test_a_rule_with_fewer_examples_lets_changes_through():
-    rule = shipped_catalogue().rule("rail-distance-off")
+    rule = shipped_catalogue(examples=True).rule("rail-distance-off")
     poorer = dataclasses.replace(rule, examples=rule.examples[1:3])
 
     assert "review guard_distance is below 15 in: dropped" in survivors(poorer)

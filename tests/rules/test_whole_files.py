@@ -137,7 +137,7 @@ def test_every_rule_is_reached_by_a_stated_machine(fan, key, subject, replacemen
 
 
 def test_no_rule_is_left_out():
-    assert {case[0] for case in CASES} == {rule.key for rule in shipped_catalogue().rules}
+    assert {case[0] for case in CASES} == {rule.key for rule in shipped_catalogue(examples=True).rules}
 
 
 @pytest.mark.parametrize(
