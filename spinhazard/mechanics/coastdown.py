@@ -25,6 +25,7 @@ _SYMBOLS = {
 }
 _NEAR_ZERO = 1e-3  # below it four terms of the series are exact to 1e-16
 _WELL_CONDITIONED = 1e-4  # share of the logarithm that must be left after the subtraction in the angle's closed form
+_SAME_TORQUE = 1e-17  # relative change of the torque that no digit of the result sees
 _NODES, _WEIGHTS = np.polynomial.legendre.leggauss(48)
 _CHUNK = 4096  # entries integrated at once, to bound the memory of the quadrature
 
@@ -152,7 +153,8 @@ def speed_after(
         end = (start - u * (2.0 * a + b * start)) / (1.0 + u * (b + 2.0 * c * start))
     stopped = ((discriminant > 0.0) & (angle >= np.pi / 2.0)) | np.isinf(half)
     nothing_brakes = (a == 0.0) & (b == 0.0) & (c == 0.0)
-    return np.where(nothing_brakes, start, np.where(stopped, 0.0, np.clip(end, 0.0, start)))
+    kept = np.where(np.isnan(half), np.nan, start)  # a missing time or inertia stays missing where nothing brakes
+    return np.where(nothing_brakes, kept, np.where(stopped, 0.0, np.clip(end, 0.0, start)))
 
 
 @formula(equation="see method: coastdown", unit="rad", symbols=_SYMBOLS, source="spinhazard-methods coastdown")
@@ -204,10 +206,11 @@ def angle_turned(
         logarithm = np.log1p((start - end) * (b + c * (start + end)) / at_end)
         rest = logarithm - b * time / body
         angle = body * rest / (2.0 * c)
-        steady = (b == 0.0) & (c == 0.0)
+        # a torque that does not change in sixteen digits is constant too: the quadrature has no scale to follow there
+        steady = ((b == 0.0) & (c == 0.0)) | ((logarithm < _SAME_TORQUE) & (a > 0.0))
         frictionless = (a == 0.0) & ~steady
         angle = np.where(frictionless, _without_friction(body, start, end, b, c), angle)
-        angle = np.where(steady, body * (start - end) * (start + end) / (2.0 * a), angle)
+        angle = np.where(steady, body * (start - end) * (start + end) / (2.0 * at_end), angle)
     hard = ~(steady | frictionless) & ~(rest > _WELL_CONDITIONED * logarithm) & (start > end) & np.isfinite(time)
     if hard.any():
         angle[hard] = _integrated(body[hard], start[hard], end[hard], a[hard], b[hard], c[hard])

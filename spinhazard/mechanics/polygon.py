@@ -2,6 +2,8 @@
 
 from __future__ import annotations
 
+from itertools import pairwise
+
 import numpy as np
 from numpy.typing import ArrayLike, NDArray
 
@@ -48,7 +50,9 @@ def revolved_moments(radii: ArrayLike, heights: ArrayLike) -> tuple[float, float
 
 
 def crosses_itself(r: Array, z: Array) -> bool:
-    """Whether two edges of a closed outline that are not neighbours meet.
+    """Whether a closed outline crosses itself, between corners or at one, or runs round more than once.
+
+    Touching is no crossing: a slit that leads to a cavity and back, and two tips that meet on the axis, enclose what they show.
 
     Parameters
     ----------
@@ -58,8 +62,14 @@ def crosses_itself(r: Array, z: Array) -> bool:
     Returns
     -------
     bool
-        True where they cross or touch.
+        True where it does; False where a corner is NaN.
     """
+    if np.isnan(r).any() or np.isnan(z).any():
+        return False
+    return _edges_cross(r, z) or not _winds_once(r, z)
+
+
+def _edges_cross(r: Array, z: Array) -> bool:
     corners = r.size
     ends = np.column_stack([r, z])
     starts, stops = ends, np.roll(ends, -1, axis=0)
@@ -70,8 +80,25 @@ def crosses_itself(r: Array, z: Array) -> bool:
     return False
 
 
+def _winds_once(r: Array, z: Array) -> bool:
+    """Whether every point is enclosed once or not at all, always in the same sense; sees crossings that lie on a corner."""
+    # between neighbouring heights of corners no edges cross (_edges_cross), so one line across each such band tells
+    r2, z2 = np.roll(r, -1), np.roll(z, -1)
+    levels = np.unique(z)
+    apart = 1e-12 * float(max(r.max(), np.ptp(z)))
+    turns = set()
+    for low, high in pairwise(levels):
+        across = np.flatnonzero((np.minimum(z, z2) <= low) & (np.maximum(z, z2) >= high))
+        share = ((low + high) / 2.0 - z[across]) / (z2[across] - z[across])
+        radius = r[across] + share * (r2[across] - r[across])
+        order = np.argsort(radius, kind="stable")
+        winding = np.cumsum(np.sign(z2[across] - z[across])[order])[:-1]
+        turns.update(winding[np.diff(radius[order]) > apart].tolist())
+    return turns <= {0.0, 1.0} or turns <= {0.0, -1.0}
+
+
 def _meet(a: Array, b: Array, c: Array, d: Array) -> NDArray[np.bool_]:
-    """Whether segment ab properly crosses each of the segments cd; touching on the axis is allowed for ring sections."""
+    """Whether segment ab crosses each of the segments cd between its ends; merely touching is left to the winding."""
     side_c, side_d = _side(a, b, c), _side(a, b, d)
     side_a, side_b = _side(c, d, a), _side(c, d, b)
     crossing: NDArray[np.bool_] = (side_c * side_d < 0.0) & (side_a * side_b < 0.0)

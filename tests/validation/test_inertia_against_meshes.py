@@ -11,7 +11,7 @@ import pytest
 import trimesh
 
 from spinhazard import assess, assessment_from_text
-from spinhazard.mechanics import inertia
+from spinhazard.mechanics import inertia, outline
 from spinhazard.rules.loading import Catalogue
 
 DENSITY = 7850.0
@@ -125,3 +125,20 @@ def test_revolved_volume_and_revolved_inertia_do_not_depend_on_the_orientation()
     assert inertia.revolved_inertia(5.0, r, heights=z) == pytest.approx(
         float(inertia.disk_inertia(5.0, 0.6, bore=0.12))
     )
+
+
+@pytest.mark.parametrize(("direction", "turn"), [("radial", [0, 1, 0]), ("tangential", [1, 0, 0])])
+def test_slender_rod_agrees_with_a_thin_cylinder(direction, turn):
+    """A cylinder a fiftieth as thick as long has 1 + 3 r²/L² times the inertia of a slender rod: 1 + 3e-4 for r = L/100."""
+    length, offset = 0.8, 0.5
+    mesh = trimesh.creation.cylinder(length / 100.0, length, sections=64)
+    mesh.apply_transform(trimesh.transformations.rotation_matrix(math.pi / 2.0, turn))
+    mesh = moved(mesh, offset)
+    mesh.density = 1.0
+    own = float(inertia.crossways_rod_inertia(mesh.mass, length))
+    ours = float(inertia.offset_inertia(own, mesh.mass, offset=offset))
+    mesh_inertia = mesh.moment_inertia[2, 2] + mesh.mass * offset**2
+
+    assert mesh_inertia - ours == pytest.approx(3e-4 * own, rel=5e-3)
+    outermost = {"radial": outline.radial_rod_tip_radius, "tangential": outline.tangential_rod_tip_radius}[direction]
+    assert float(outermost(length, offset=offset)) == pytest.approx(tip(mesh), rel=2e-2)
