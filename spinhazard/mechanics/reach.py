@@ -191,7 +191,7 @@ OPENING_DISTANCES = {
 """Distance asked for by class and shape [m], same source."""
 US_DISTANCES_INCH = np.array([0.5, 1.5, 2.5, 3.5, 5.5, 6.5, 7.5, 12.5, 15.5, 17.5])
 US_OPENINGS_INCH = np.array([0.25, 0.375, 0.5, 0.625, 0.75, 0.875, 1.25, 1.5, 1.875, 2.125])
-"""29 CFR 1910.217 table O-10 [in], from memory: from each distance on, the widest opening."""
+"""29 CFR 1910.217 table O-10 [in], read in a reprint of 2002: from each distance on, the widest opening."""
 _EDGE = 1e-9  # a distance given as 150 mm is 150 mm whatever its last binary digit
 
 

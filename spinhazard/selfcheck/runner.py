@@ -70,7 +70,8 @@ class Check:
     kind : str
         "published", "recomputed" by other means, or "regression" (no evidence of its own).
     read : str
-        "text" where the figure was read in a text, "memory" where it was not.
+        "text" where the figure was read in a text, "memory" where it was not, "computed" where it was worked out by
+        other means from formulas that do not rest on memory.
     """
 
     name: str
@@ -83,7 +84,7 @@ class Check:
     because: str
     source: str
     kind: Literal["published", "recomputed", "regression"]
-    read: Literal["text", "memory"]
+    read: Literal["text", "memory", "computed"]
 
 
 @dataclass(frozen=True)

@@ -12,7 +12,7 @@ from spinhazard.quantity.units import KINDS, UNIT_NAMES, UnitRefused, factor_to_
 @pytest.mark.parametrize(
     ("unit", "kind", "factor"),
     [
-        # NIST Special Publication 811 (2008), appendix B.8, factors as printed there; from memory
+        # NIST Special Publication 811 (2008), appendix B.8, read in published transcriptions
         ("in", "length", 0.0254),
         ("ft", "length", 0.3048),
         ("mil", "length", 2.54e-5),

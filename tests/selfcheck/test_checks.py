@@ -51,9 +51,9 @@ def test_zero_is_compared_absolutely():
 def test_there_are_enough_published_values_most_of_them_read_and_no_conversions():
     published = [check for check in CHECKS if check.kind == "published"]
 
-    assert len(published) >= 80
-    assert len([check for check in published if check.subject != "units"]) >= 60
-    assert len([check for check in published if check.read == "text"]) >= 50
+    assert len(published) >= 140
+    assert len([check for check in published if check.subject != "units"]) >= 110
+    assert len([check for check in published if check.read == "text"]) >= 130
 
 
 def test_every_subject_has_its_values():
@@ -67,7 +67,13 @@ def test_every_subject_has_its_values():
         "units",
     }
     assert {check.kind for check in CHECKS} <= {"published", "recomputed", "regression"}
-    assert {check.read for check in CHECKS} <= {"text", "memory"}
+    assert {check.read for check in CHECKS} <= {"text", "memory", "computed"}
+
+
+@every_check
+def test_only_what_was_recomputed_counts_as_computed(check):
+    assert (check.read == "computed") <= (check.kind in {"recomputed", "regression"})
+    assert check.kind == "published" or check.read != "text"
 
 
 def test_all_checks_run_in_the_order_of_the_files():
@@ -96,3 +102,9 @@ def test_names_are_told_apart():
     names = [(check.subject, check.name) for check in CHECKS]
 
     assert len(names) == len(set(names))
+
+
+def test_published_value_is_given_with_the_figures_of_its_source():
+    for check in CHECKS:
+        if check.kind == "published":
+            assert any(sign.isdigit() or sign in "½ρω" for sign in check.stated), check.name

@@ -1,6 +1,6 @@
 """Procedures of standards and screening formulas against their own figures, worked out here by other means.
 
-Sources: ISO 13855:2010 clause 6 and ISO 13857 table 4 (figures from memory), 29 CFR 1910.217 table O-10 (from memory),
+Sources: ISO 13855:2010 clause 6 and ISO 13857 table 4 (figures from memory), 29 CFR 1910.217 table O-10 (reprint of 2002),
 BC-TOP-9-A revision 2 (from memory), Schlichting chapters 5 and 21 (from memory). Functions: curtain_distance,
 iso_opening_limit, iso_opening_distance, us_opening_limit, stanford_perforation_thickness, disk_windage_torque.
 """
